@@ -1,0 +1,61 @@
+// Every sentence that a user can read from the engine or from a worksheet function stands here, and the one class that carries it.
+
+/** Why there is no result. `input`: an argument is wrong. `none`: the question is fine and has no answer. */
+export class Fault extends Error {
+  override name = 'Fault';
+
+  constructor(readonly kind: 'input' | 'none', sentence: string) {
+    super(sentence);
+  }
+}
+
+/** A value as the sentence shows it: text in quotes and cut short, numbers to the digits a cell shows. */
+export function shown(value: unknown): string {
+  if (value === null || value === undefined || value === '') return 'a blank cell';
+  if (typeof value === 'boolean') return value ? 'TRUE' : 'FALSE';
+  if (typeof value === 'number') return String(Number.isFinite(value) ? Number(value.toPrecision(15)) : value);
+  const text = String(value);
+  return `"${text.length > 40 ? `${text.slice(0, 39)}…` : text}"`;
+}
+
+const input = (sentence: string) => new Fault('input', sentence);
+const none = (sentence: string) => new Fault('none', sentence);
+const count = (n: bigint) => n.toString().replace(/\B(?=(\d{3})+$)/g, ' ');
+
+export const faults = {
+  notNumber: (argument: string, value: unknown) => input(`${argument} must be a number; got ${shown(value)}.`),
+  notPositive: (argument: string, value: number) => input(`${argument} must be above 0; got ${shown(value)}.`),
+  negative: (argument: string, value: number) => input(`${argument} must be 0 or more; got ${shown(value)}.`),
+  unknownWord: (argument: string, value: unknown, accepted: readonly string[]) =>
+    input(`${argument} must be ${accepted.map((word) => `"${word}"`).join(' or ')}; got ${shown(value)}.`),
+  notFlag: (argument: string, value: unknown) => input(`${argument} must be TRUE or FALSE; got ${shown(value)}.`),
+  notSingle: (argument: string, rows: number, columns: number) => input(`${argument} must be a single cell; got ${rows} × ${columns} cells.`),
+  notVector: (argument: string, rows: number, columns: number) => input(`${argument} must be one column or one row of cells; got ${rows} × ${columns} cells.`),
+  sizesDiffer: (argument: string, size: string, other: string, otherSize: string) =>
+    input(`${argument} must be one cell or the size of ${other}, ${otherSize} cells; got ${size} cells.`),
+  countsDiffer: (argument: string, got: number, other: string, wanted: number) =>
+    input(`${argument} must have as many cells as ${other}, ${wanted}; got ${got}.`),
+  edgesReversed: (low: string, lowValue: number, high: string, highValue: number) =>
+    input(`${low} must not be above ${high}; got ${shown(lowValue)} and ${shown(highValue)}.`),
+  ppmTooLarge: (value: number) => input(`ppm must be below 1000000; got ${shown(value)}.`),
+  outsideSpectrum: (argument: string, value: number, lowest: number, highest: number, open: boolean) =>
+    input(`${argument} must be from ${shown(lowest)} to ${open ? 'below ' : ''}${shown(highest)}, where this rate puts frequencies; got ${shown(value)}.`),
+  zoneTooHigh: (frequency: number, rate: number) =>
+    input(`rate must be large enough for a zone number that a cell can hold; got ${shown(rate)} for a frequency of ${shown(frequency)}.`),
+  tooManyRows: (rows: bigint, how: string) => input(`The result would have ${count(rows)} rows and at most 10 000 are listed; ${how}.`),
+  tooManyCandidates: (candidates: bigint) =>
+    input(`from and to leave ${count(candidates)} candidates to compare and at most 100 000 are tried; bring them closer together.`),
+  endlessRates: () => input('from must be above 0 for a tone without guard or tolerance, which is usable at rates down to 0; got a blank cell.'),
+
+  nothingLands: (folded: number, from: number, to: number) =>
+    none(`No frequency from ${shown(from)} to ${shown(to)} lands on ${shown(folded)}.`),
+  nothingFits: (from: number, to: number) => none(`No frequency from ${shown(from)} to ${shown(to)} fits every observation.`),
+  holdsZero: (low: number, high: number) =>
+    none(`No rate is usable: the band from ${shown(low)} to ${shown(high)} holds 0, which is a zone edge at every rate.`),
+  guardReachesZero: (edge: number, guard: number) =>
+    none(`No rate is usable: the band begins at ${shown(edge)}, nearer to the zone edge at 0 than the guard of ${shown(guard)}.`),
+  noRateInRange: (from: number, to: number | null) =>
+    none(`No rate ${to === null ? `from ${shown(from)} up` : `from ${shown(from)} to ${shown(to)}`} holds the band within one zone.`),
+  noLowestRate: () => none('There is no lowest rate: a tone without guard or tolerance is usable at rates down to 0.'),
+  rangesTooNarrow: () => none('The lowest usable ranges are narrower than a cell can show; give a guard or a tolerance.'),
+} as const;

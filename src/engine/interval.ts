@@ -1,0 +1,16 @@
+// A closed interval of exact numbers, its two ends included; a point where they are equal.
+
+import { type Rational, add, compare, greatest, half, least, negate, subtract } from './rational';
+
+export interface Interval {
+  readonly low: Rational;
+  readonly high: Rational;
+}
+
+export const interval = (low: Rational, high: Rational): Interval => ({ low, high });
+export const isEmpty = (x: Interval): boolean => compare(x.low, x.high) > 0;
+export const mirror = (x: Interval): Interval => ({ low: negate(x.high), high: negate(x.low) });
+export const shift = (x: Interval, by: Rational): Interval => ({ low: add(x.low, by), high: add(x.high, by) });
+export const intersect = (x: Interval, y: Interval): Interval => ({ low: greatest(x.low, y.low), high: least(x.high, y.high) });
+export const centre = (x: Interval): Rational => half(add(x.low, x.high));
+export const width = (x: Interval): Rational => subtract(x.high, x.low);

@@ -1,0 +1,4 @@
+// The functions bundle. The build adds a call of CustomFunctions.associate for every worksheet function of these files.
+
+export * from './landing';
+export * from './rates';

@@ -1,0 +1,134 @@
+// Builds the static site (dist/) and the command line (dist-cli/).
+//
+// Options, each as --env name=value:
+//   base      address that the site will be served from (default https://localhost:3000)
+//   officejs  "vendor" loads Office.js from its vendor's address (default), "self" puts a copy into dist/office/
+//   development  readable pages, built in seconds
+//   excel     serve over https with the development certificate, for `npm run excel`
+
+import { readFileSync } from 'node:fs';
+import { createRequire } from 'node:module';
+import path from 'node:path';
+import CopyPlugin from 'copy-webpack-plugin';
+import CustomFunctionsMetadataPlugin from 'custom-functions-metadata-plugin';
+import HtmlPlugin from 'html-webpack-plugin';
+import MiniCssExtractPlugin from 'mini-css-extract-plugin';
+import webpack from 'webpack';
+import { helpPage } from './src/help/help-page.js';
+
+const root = import.meta.dirname;
+const at = (...parts) => path.join(root, ...parts);
+const require = createRequire(import.meta.url);
+const { version } = JSON.parse(readFileSync(at('package.json'), 'utf8'));
+
+const VENDOR_OFFICE_JS = 'https://appsforoffice.microsoft.com/lib/1/hosted/office.js';
+
+/** Source files that hold worksheet functions, in the order of the function list. */
+const FAMILIES = ['landing', 'rates'].map((family) => at('src/functions', `${family}.ts`));
+
+/** The part of the vendor's package that a self-hosted Office.js consists of; the rest is typings, debug builds and other hosts. */
+const OFFICE_FILES = [
+  'office.js', 'excel-web-16.00.js', 'excel-win32-16.01.js', 'excel-mac-16.00.js', 'o15apptofilemappingtable.js',
+  'custom-functions-runtime.js', '*/office_strings.js',
+];
+
+/** Turns the generated metadata into ours: errors in cells reach the function, rich values don't, and each function knows its help. */
+class FunctionsJson {
+  constructor(base) {
+    this.base = base;
+  }
+
+  apply(compiler) {
+    compiler.hooks.compilation.tap('FunctionsJson', (compilation) => {
+      const stage = webpack.Compilation.PROCESS_ASSETS_STAGE_ADDITIONS;
+      compilation.hooks.processAssets.tap({ name: 'FunctionsJson', stage }, () => {
+        const generated = JSON.parse(compilation.getAsset('functions.json').source.source().toString());
+        const metadata = {
+          allowErrorForDataTypeAny: true,
+          functions: generated.functions.map((f) => ({ ...f, helpUrl: `${this.base}/help.html#${f.id}` })),
+        };
+        compilation.updateAsset('functions.json', new webpack.sources.RawSource(`${JSON.stringify(metadata, null, 2)}\n`));
+        compilation.emitAsset('help.html', new webpack.sources.RawSource(helpPage(metadata, version)));
+      });
+    });
+  }
+}
+
+const typescript = { test: /\.ts$/, exclude: /node_modules/, use: { loader: 'ts-loader', options: { transpileOnly: true } } };
+
+const common = (name, mode) => ({
+  name,
+  mode,
+  context: root,
+  devtool: mode === 'production' ? 'source-map' : 'eval-source-map',
+  resolve: { extensions: ['.ts', '.js'] },
+  performance: { hints: false },
+  cache: { type: 'filesystem', cacheDirectory: at('.cache'), name: `${name}-${mode}`, buildDependencies: { config: [import.meta.filename] } },
+});
+
+export default (env) => {
+  const mode = env.development ? 'development' : 'production';
+  const base = (env.base ?? 'https://localhost:3000').replace(/\/+$/, '');
+  const selfHosted = (env.officejs ?? 'vendor') === 'self';
+  const officeJs = selfHosted ? 'office/office.js' : VENDOR_OFFICE_JS;
+  const page = (name, template) => new HtmlPlugin({
+    filename: `${name}.html`, template: at(template), chunks: [name], templateParameters: { officeJs, version }, scriptLoading: 'defer',
+  });
+
+  const functions = {
+    ...common('functions', 'production'), // always as shipped: it is small, and what tests and users run is one thing
+    target: ['web', 'es2020'],
+    entry: { functions: at('src/functions/index.ts') },
+    output: { path: at('dist'), filename: '[name].js' },
+    module: { rules: [typescript] },
+    plugins: [
+      new CustomFunctionsMetadataPlugin({ output: 'functions.json', input: FAMILIES }),
+      new FunctionsJson(base),
+    ],
+    cache: false, // the metadata plugin adds its calls at load time and must see every file
+  };
+
+  const site = {
+    ...common('site', mode),
+    target: ['web', 'es2022'],
+    entry: { pane: at('src/main-office.ts'), workbench: at('src/main-workbench.ts') },
+    output: { path: at('dist'), filename: '[name].js', chunkFilename: '[name].[contenthash].js', assetModuleFilename: 'assets/[name][ext]' },
+    module: { rules: [typescript, { test: /\.css$/, use: [MiniCssExtractPlugin.loader, 'css-loader'] }] },
+    plugins: [
+      new MiniCssExtractPlugin(),
+      page('pane', 'src/pane/pane.html'),
+      page('workbench', 'src/pane/workbench.html'),
+      new webpack.DefinePlugin({ FOLDPLAN_VERSION: JSON.stringify(version) }),
+      new CopyPlugin({
+        patterns: [
+          { from: at('assets'), to: 'assets' },
+          { from: at('manifest/manifest.xml'), to: 'manifest.xml', transform: (text) => text.toString().replaceAll('{{base}}', base).replaceAll('{{version}}', `${version}.0`) },
+          ...(selfHosted
+            ? OFFICE_FILES.map((from) => ({ from, to: 'office', context: path.dirname(require.resolve('@microsoft/office-js/dist/office.js')) }))
+            : []),
+        ],
+      }),
+    ],
+    devServer: {
+      port: 3000,
+      open: env.excel ? false : ['/workbench.html'],
+      static: false,
+      client: { overlay: false },
+      ...(env.excel ? { server: { type: 'https', options: env.excel } } : {}),
+    },
+  };
+
+  const recalc = {
+    ...common('recalc', mode),
+    target: 'node20',
+    devtool: 'source-map',
+    entry: { recalc: at('src/main-recalc.ts') },
+    output: { path: at('dist-cli'), filename: '[name].cjs', library: { type: 'commonjs2' } },
+    module: { rules: [typescript] },
+    // Packages stay where npm put them: only our own sources are bundled.
+    externals: [({ request }, done) => (/^[.\/]/.test(request) || path.isAbsolute(request) ? done() : done(null, `commonjs ${request}`))],
+    plugins: [new webpack.DefinePlugin({ FOLDPLAN_VERSION: JSON.stringify(version) })],
+  };
+
+  return env.WEBPACK_SERVE ? [site, functions] : [functions, site, recalc];
+};
