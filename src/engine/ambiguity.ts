@@ -22,7 +22,7 @@ export interface Source {
  * Every frequency from `from` to `to` that lands on a folded frequency, ascending.
  * @param folded from 0 to rate/2; at IQ sampling from −rate/2 to below rate (the part from rate/2 on is the part below 0)
  * @throws Fault where an argument is out of range, nothing lands there, or more than 10 000 frequencies would be listed
- * @example imagesOf(30, 100, 0, 200) // => 30, 70, 130 and 170, in zones 1 to 4
+ * @example imagesOf(30, 100, 0, 200).map(({ frequency }) => frequency) // => [30, 70, 130, 170] (in zones 1 to 4)
  */
 export function imagesOf(folded: number, rate: number, from: number, to: number, sampling: Sampling = 'real'): Source[] {
   const fs = readRate(rate);
@@ -50,7 +50,7 @@ export interface FrequencyRange {
  * @param rates each above 0, as many as observations
  * @param tolerance 0 or more: how far each observation may be off
  * @throws Fault where an argument is out of range, nothing agrees, or the range leaves too much to try
- * @example resolveFrequency([14, 10, 4], [56, 40, 33], 0, 1000) // => 70 alone
+ * @example resolveFrequency([14, 10, 4], [56, 40, 33], 0, 1000) // => [{ lowest: 70, highest: 70 }]
  */
 export function resolveFrequency(observed: readonly number[], rates: readonly number[], from: number, to: number, tolerance = 0, sampling: Sampling = 'real'): FrequencyRange[] {
   if (observed.length !== rates.length) throw faults.countsDiffer('rates', rates.length, 'observed', observed.length);

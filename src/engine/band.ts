@@ -48,7 +48,7 @@ export const folds = (band: Interval, sampling: Sampling): Interval => (sampling
 
 /**
  * The lowest folded frequency of a band; see bandImage.
- * @example imageLow(17, 22, 20) // => 0, since the band holds the zone edge 20
+ * @example imageLow(17, 22, 20) // => 0 (the band holds the zone edge 20)
  */
 export const imageLow = (low: number, high: number, rate: number, sampling: Sampling = 'real'): number =>
   toNumber(bandImage(readBand(low, high), readRate(rate), sampling).low);
@@ -99,7 +99,7 @@ export const bandInverted = (low: number, high: number, rate: number, sampling: 
  * @param guard 0 or more: the clear distance wanted
  * @param ppm from 0 to below a million: how far the clock may be off either way
  * @throws Fault where low is above high, rate is not above 0, or guard or ppm is out of range
- * @example bandMargin(17.5, 22.5, 40) // => -2.5, across the edge 20
+ * @example bandMargin(17.5, 22.5, 40) // => -2.5 (it crosses the edge 20)
  */
 export function bandMargin(low: number, high: number, rate: number, guard = 0, ppm = 0, sampling: Sampling = 'real'): number {
   return toNumber(margin(readBand(low, high), readRate(rate), readGuard(guard), readTolerance(ppm), sampling));
@@ -137,7 +137,7 @@ export function bandCheck(low: number, high: number, rate: number, guard = 0, pp
  * to move. Two images overlap when a multiple of the rate lies between the extreme differences of the bands or, at real sampling,
  * of their sums; so this is the distance of that interval from the nearest multiple.
  * @throws Fault where low is above high in either band, or rate is not above 0
- * @example bandGap(10, 20, 75, 85, 100) // => -5, since 75 to 85 lands on 15 to 25
+ * @example bandGap(10, 20, 75, 85, 100) // => -5 (75 to 85 lands on 15 to 25)
  */
 export function bandGap(low: number, high: number, otherLow: number, otherHigh: number, rate: number, sampling: Sampling = 'real'): number {
   const band = readBand(low, high);
