@@ -58,7 +58,7 @@ export function resolveFrequency(observed: readonly number[], rates: readonly nu
   const span = readSpan(from, to);
   const blur = fromNumber(tolerance);
   const combs = rates.map((rate, i) => {
-    const fs = readRate(rate);
+    const fs = readRate(rate, 'rates');
     const seen = readFolded('observed', observed[i]!, fs, blur, sampling);
     return new Comb(interval(subtract(seen, blur), add(seen, blur)), fs, sampling);
   });

@@ -22,8 +22,8 @@ export function readBand(low: number, high: number, lowName = 'low', highName = 
 }
 
 /** @throws Fault where rate is not above 0 */
-export function readRate(rate: number): Rational {
-  if (!(rate > 0)) throw faults.notPositive('rate', rate);
+export function readRate(rate: number, name = 'rate'): Rational {
+  if (!(rate > 0)) throw faults.notPositive(name, rate);
   return fromNumber(rate);
 }
 

@@ -1,0 +1,46 @@
+// The built worksheet functions, called as a host calls them.
+
+import { readFileSync } from 'node:fs';
+import path from 'node:path';
+import { type Argument, FunctionError, callFunction, loadFunctions } from '../../src/host/sheet/functions-runtime';
+import { dist } from './browser';
+
+export const built = loadFunctions(JSON.parse(readFileSync(path.join(dist, 'functions.json'), 'utf8')), readFileSync(path.join(dist, 'functions.js'), 'utf8'));
+
+type Input = Argument[number][number];
+
+/** One cell, a column of cells, or rows of cells; null is an argument left out. */
+export type Given = Input | Input[] | Argument;
+
+const asCells = (given: Given): Argument | null => {
+  if (given === null) return null;
+  if (!Array.isArray(given)) return [[given]];
+  return given.map((line) => (Array.isArray(line) ? line : [line]));
+};
+
+/** The rows of cells that FOLD.id gives, an error as `#CODE! sentence`. */
+export function call(id: string, ...args: Given[]): unknown[][] {
+  const { metadata, implementations } = built;
+  const { parameters } = metadata.find((one) => one.id === id)!;
+  const all = parameters.map((_, i) => asCells(args[i] ?? null));
+  return callFunction(implementations.get(id)!, all).map((line) =>
+    line.map((cell) => (cell instanceof FunctionError ? [cell.code, cell.message].filter(Boolean).join(' ') : cell)));
+}
+
+/** A call of each function with every argument given. Arguments of row functions are cells, so the result is one cell. */
+export const FULL_CALLS: Record<string, Given[]> = {
+  FREQ: [70, 100, 'real'],
+  ZONE: [70, 100, 'real'],
+  INVERTED: [70, 100, 'real'],
+  LOW: [60, 90, 100, 'real'],
+  HIGH: [60, 90, 100, 'real'],
+  MARGIN: [60, 90, 100, 2, 1000, 'real'],
+  CHECK: [60, 90, 100, 2, 1000, 'real'],
+  GAP: [60, 90, 10, 20, 100, 'real'],
+  BAND: [60, 90, 100, 2, 1000, 'real', false],
+  IMAGES: [30, 100, 0, 150, 'real', false],
+  RESOLVE: [[14, 10, 4], [56, 40, 33], 0, 1000, 0.5, 'real', false],
+  RATES: [17.5, 22.5, 12, 40, 0.1, 10, 'real', false],
+  MINRATE: [17.5, 22.5, 0.1, 10, 'real'],
+  TOLERANCE: [60, 90, 100, 2, 'real'],
+};
