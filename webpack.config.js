@@ -4,6 +4,7 @@
 //   base      address that the site will be served from (default https://localhost:3000)
 //   officejs  "vendor" loads Office.js from its vendor's address (default), "self" puts a copy into dist/office/
 //   development  readable pages, built in seconds
+//   bench     build the benchmark instead, into dist-cli/
 //   excel     serve over https with the development certificate, for `npm run excel`
 
 import { readFileSync } from 'node:fs';
@@ -118,17 +119,18 @@ export default (env) => {
     },
   };
 
-  const recalc = {
-    ...common('recalc', mode),
+  /** A program for Node. Packages stay where npm put them: only our own sources are bundled. */
+  const program = (name, source) => ({
+    ...common(name, mode),
     target: 'node20',
     devtool: 'source-map',
-    entry: { recalc: at('src/main-recalc.ts') },
+    entry: { [name]: at(source) },
     output: { path: at('dist-cli'), filename: '[name].cjs', library: { type: 'commonjs2' } },
     module: { rules: [typescript] },
-    // Packages stay where npm put them: only our own sources are bundled.
-    externals: [({ request }, done) => (/^[.\/]/.test(request) || path.isAbsolute(request) ? done() : done(null, `commonjs ${request}`))],
+    externals: [({ request }, done) => (/^[./]/.test(request) || path.isAbsolute(request) ? done() : done(null, `commonjs ${request}`))],
     plugins: [new webpack.DefinePlugin({ FOLDPLAN_VERSION: JSON.stringify(version) })],
-  };
+  });
 
-  return env.WEBPACK_SERVE ? [site, functions] : [functions, site, recalc];
+  if (env.bench) return [functions, program('bench', 'test/bench/run.ts')];
+  return env.WEBPACK_SERVE ? [site, functions] : [functions, site, program('recalc', 'src/main-recalc.ts')];
 };

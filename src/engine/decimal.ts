@@ -12,21 +12,24 @@ export const POWERS_OF_TEN: readonly number[] = Array.from({ length: 23 }, (_, k
 
 const LIMIT = 1e15;
 
+/** x·power, rounded to a whole number: exactly x·power where isWhole says so of that power of ten. */
+export const scaled = (x: number, power: number): number => Math.round(x * power);
+
 /**
- * x·10^places as a whole number below 10^15 in size, or NaN where x isn't one at so many places.
+ * Whether x is a whole number below 10^15 in size at so many places.
  * The test is exact: the quotient of two exact doubles is the double nearest to that decimal, and no other decimal of at most
  * 15 digits shares it.
  */
-export function scaled(x: number, places: number): number {
+export function isWhole(x: number, places: number): boolean {
   const power = POWERS_OF_TEN[places]!;
-  const whole = Math.round(x * power);
-  return whole / power === x && whole < LIMIT && whole > -LIMIT ? whole : NaN;
+  const whole = scaled(x, power);
+  return whole / power === x && whole < LIMIT && whole > -LIMIT;
 }
 
-/** The least number of places, from `start` on, at which x is a whole number below 10^15 in size, or −1 where there is none up to 22. */
+/** The least number of places, from `start` on, at which isWhole holds, or −1 where there is none up to 22. */
 export function placesOf(x: number, start = 0): number {
   for (let places = start; places < POWERS_OF_TEN.length; places++) {
-    if (!Number.isNaN(scaled(x, places))) return places;
+    if (isWhole(x, places)) return places;
     if (Math.abs(x) * POWERS_OF_TEN[places]! >= LIMIT) return -1;
   }
   return -1;
@@ -35,7 +38,7 @@ export function placesOf(x: number, start = 0): number {
 /** The decimal of at most 15 significant digits that a sheet shows for a finite x. */
 export function decimalOf(x: number): Decimal {
   const places = placesOf(x);
-  if (places >= 0) return { coefficient: BigInt(scaled(x, places)), places };
+  if (places >= 0) return { coefficient: BigInt(scaled(x, POWERS_OF_TEN[places]!)), places };
   const [digits, exponent] = x.toExponential(14).split('e') as [string, string];
   const significant = digits.replace('.', '').replace(/0+$/, '');
   const fraction = significant.replace('-', '').length - 1;

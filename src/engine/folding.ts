@@ -1,6 +1,6 @@
 // Where one frequency lands after sampling.
 
-import { POWERS_OF_TEN, placesOf, scaled } from './decimal';
+import { POWERS_OF_TEN, isWhole, placesOf, scaled } from './decimal';
 import { faults } from './fault';
 import { type Rational, absolute, add, divide, floor, fromNumber, half, rational, subtract, times, toNumber } from './rational';
 
@@ -17,9 +17,11 @@ export type Sampling = 'real' | 'iq';
  * @example foldedFrequency(70, 100) // => 30
  */
 export function foldedFrequency(frequency: number, rate: number, sampling: Sampling = 'real'): number {
-  const place = locate(frequency, rate);
-  if (place === null) return toNumber(foldExactly(fromNumber(frequency), fromNumber(rate), sampling));
-  const { rest, period, power } = place;
+  const places = commonPlaces(frequency, rate);
+  if (places < 0) return toNumber(foldExactly(fromNumber(frequency), fromNumber(rate), sampling));
+  const power = POWERS_OF_TEN[places]!;
+  const period = scaled(rate, power);
+  const rest = remainder(scaled(frequency, power), period);
   if (2 * rest < period) return rest / power;
   return (sampling === 'iq' ? rest - period : period - rest) / power;
 }
@@ -31,14 +33,19 @@ export function foldedFrequency(frequency: number, rate: number, sampling: Sampl
  * @example frequencyZone(70, 100) // => 2
  */
 export function frequencyZone(frequency: number, rate: number, sampling: Sampling = 'real'): number {
-  const place = locate(sampling === 'iq' ? frequency : Math.abs(frequency), rate);
-  if (place === null) {
+  const places = commonPlaces(frequency, rate);
+  if (places < 0) {
     const zone = Number(zoneExactly(fromNumber(frequency), fromNumber(rate), sampling));
     if (!Number.isFinite(zone)) throw faults.zoneTooHigh(frequency, rate);
     return zone;
   }
-  const upper = 2 * place.rest >= place.period ? 1 : 0;
-  return sampling === 'iq' ? place.turns + upper : 2 * place.turns + upper + 1;
+  const power = POWERS_OF_TEN[places]!;
+  const period = scaled(rate, power);
+  const whole = scaled(sampling === 'iq' ? frequency : Math.abs(frequency), power);
+  const rest = remainder(whole, period);
+  const turns = (whole - rest) / period;
+  const upper = 2 * rest >= period ? 1 : 0;
+  return sampling === 'iq' ? turns + upper : 2 * turns + upper + 1;
 }
 
 /**
@@ -47,9 +54,12 @@ export function frequencyZone(frequency: number, rate: number, sampling: Samplin
  * @example isInverted(70, 100) // => true
  */
 export function isInverted(frequency: number, rate: number, sampling: Sampling = 'real'): boolean {
-  const place = locate(Math.abs(frequency), rate);
+  const places = commonPlaces(frequency, rate);
   if (sampling === 'iq') return false;
-  return place === null ? isEven(zoneExactly(fromNumber(frequency), fromNumber(rate), sampling)) : 2 * place.rest >= place.period;
+  if (places < 0) return isEven(zoneExactly(fromNumber(frequency), fromNumber(rate), sampling));
+  const power = POWERS_OF_TEN[places]!;
+  const period = scaled(rate, power);
+  return 2 * remainder(scaled(Math.abs(frequency), power), period) >= period;
 }
 
 /** Real zones invert where they are even. */
@@ -76,52 +86,27 @@ export function zoneEdges(zone: bigint, rate: Rational, sampling: Sampling): { l
   return { lower: half(times(rate, halves)), upper: half(times(rate, halves + width)) };
 }
 
-/** frequency = (turns·period + rest) / power in whole numbers, 0 ≤ rest < period. */
-interface Place {
-  turns: number;
-  rest: number;
-  period: number;
-  power: number;
-}
-
-const place: Place = { turns: 0, rest: 0, period: 0, power: 1 };
-let lastRate = NaN;
-let lastPlaces = 0;
+let knownRate = NaN;
+let knownPlaces = -1;
 
 /**
- * Splits a frequency into whole periods of the rate and a rest, exactly, on whole numbers below 10^15: the fast path.
- * Null where frequency and rate share no such scale. One result object serves all calls, and the places of the last rate are
- * kept, since a column of a plan asks for the same rate row after row.
+ * Places at which frequency and rate are both whole numbers below 10^15, or −1 where there are none: then the fast path is closed.
+ * The last answer is tried first, since a column of a plan asks for one rate and like frequencies row after row.
+ * @throws Fault where rate is not above 0
  */
-function locate(frequency: number, rate: number): Place | null {
+function commonPlaces(frequency: number, rate: number): number {
+  if (rate === knownRate && knownPlaces >= 0 && isWhole(frequency, knownPlaces)) return knownPlaces;
   if (!(rate > 0)) throw faults.notPositive('rate', rate);
-  if (rate !== lastRate) {
-    lastRate = rate;
-    lastPlaces = placesOf(rate);
-  }
-  if (lastPlaces < 0) return null;
-  let places = lastPlaces;
-  let whole = scaled(frequency, places);
-  if (Number.isNaN(whole)) {
-    places = placesOf(frequency, places + 1);
-    if (places < 0) return null;
-    whole = scaled(frequency, places);
-  }
-  const period = scaled(rate, places);
-  if (Number.isNaN(period)) return null;
+  const ratePlaces = placesOf(rate);
+  const places = ratePlaces < 0 ? -1 : placesOf(frequency, ratePlaces);
+  knownRate = rate;
+  knownPlaces = places >= 0 && isWhole(rate, places) ? places : -1;
+  return knownPlaces;
+}
+
+/** The rest of a whole number after whole periods, exactly; both below 10^15 in size. */
+function remainder(whole: number, period: number): number {
   // The quotient of doubles may be off by one where it is near a whole number; the rest, exact below 2^53, tells.
-  let turns = Math.floor(whole / period);
-  let rest = whole - turns * period;
-  if (rest < 0) {
-    turns--;
-    rest += period;
-  } else if (rest >= period) {
-    turns++;
-    rest -= period;
-  }
-  place.turns = turns;
-  place.rest = rest;
-  place.period = period;
-  place.power = POWERS_OF_TEN[places]!;
-  return place;
+  const rest = whole - Math.floor(whole / period) * period;
+  return rest < 0 ? rest + period : rest >= period ? rest - period : rest;
 }

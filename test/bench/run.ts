@@ -1,0 +1,9 @@
+// `npm run bench`: seeded, everything measured in one run, printed as the table that the README shows.
+
+import { benchFunctions } from './functions';
+import { markdown } from './table';
+
+const SEED = 20261201;
+
+const rows = [...benchFunctions(SEED)];
+process.stdout.write(`seed ${SEED}, Node ${process.version}\n\n${markdown(rows)}\n`);
