@@ -1,0 +1,247 @@
+// The port over a live workbook of the embedded sheet, with a window or without.
+
+import {
+  type ICellData, type IDisposable, type Univer, type Workbook as UniverWorkbook, type Worksheet, ICommandService, IUndoRedoService,
+  IUniverInstanceService, UniverInstanceType, generateRandomId,
+} from '@univerjs/core';
+import { FORMULA_REF_TO_ARRAY_CACHE, FormulaDataModel, FormulaExecuteStageType, ICalculateFormulaService, IDefinedNamesService } from '@univerjs/engine-formula';
+import { SetRangeValuesCommand, SetWorksheetColumnCountCommand, SetWorksheetRowCountCommand } from '@univerjs/sheets';
+import { FormulaCalculationSessionService } from '@univerjs/sheets-formula';
+import { type Block, type CellError, type CellInput, type CellValue, type Host, type Workbook, HostFault } from '../port';
+import { type CellRange, formatCell, formatRange, parseReference } from './address';
+import { cellData, plainValue } from './cell-values';
+import { FunctionError, NAMESPACE } from './functions-runtime';
+import { BlockFollower, onRecalculated } from './recalculation';
+import type { Listener } from './univer-functions';
+import { formulaAt, fromWorkbook, spills, toWorkbookData } from './workbook-data';
+
+export class SheetHost implements Host {
+  private workbook: UniverWorkbook | null = null;
+  private blocks: BlockFollower | null = null;
+
+  /**
+   * Load a workbook before anything else.
+   * @param listener the one that the functions of this sheet were made with
+   */
+  constructor(readonly univer: Univer, private readonly listener: Listener) {}
+
+  // The port
+
+  async read(reference: string): Promise<Block | null> {
+    const place = this.find(reference);
+    if (!place) return null;
+    const { sheet, range } = place;
+    const values = this.values(sheet, range);
+    const sentences = await this.sentences(sheet, errorsIn(values, range));
+    for (const { row, column, sentence } of sentences) (values[row - range.startRow]![column - range.startColumn] as CellError).message = sentence;
+    return { sheet: sheet.getName(), address: formatRange(range), values };
+  }
+
+  async write(reference: string, cells: CellInput[][]): Promise<void> {
+    const place = this.find(reference);
+    if (!place) throw new HostFault(`The workbook has no name, sheet or cells called ${reference}.`);
+    const { sheet, range } = place;
+    const rows = range.endRow - range.startRow + 1;
+    const columns = range.endColumn - range.startColumn + 1;
+    const other = cells.find((row) => row.length !== columns);
+    if (cells.length !== rows || other) {
+      throw new HostFault(`${reference} has ${rows} × ${columns} cells; got ${cells.length} × ${other?.length ?? cells[0]?.length ?? 0}.`);
+    }
+    const target = { unitId: sheet.getUnitId(), subUnitId: sheet.getSheetId() };
+    this.inOneStep(() => {
+      this.run(SetWorksheetRowCountCommand.id, { ...target, rowCount: Math.max(sheet.getRowCount(), range.endRow + 1) });
+      this.run(SetWorksheetColumnCountCommand.id, { ...target, columnCount: Math.max(sheet.getColumnCount(), range.endColumn + 1) });
+      this.run(SetRangeValuesCommand.id, { ...target, range, value: cells.map((row) => row.map(inputData)) });
+    });
+  }
+
+  async onRecalculated(listener: () => void): Promise<() => Promise<void>> {
+    const stop = onRecalculated(this.session, listener);
+    return async () => stop();
+  }
+
+  // The workbook as a whole
+
+  /**
+   * Takes the place of the workbook that was open, and resolves when every formula is computed.
+   * @param onProgress told how many formulas are computed, and of how many
+   */
+  async load(workbook: Workbook, onProgress: (done: number, total: number) => void = () => {}): Promise<void> {
+    const data = toWorkbookData(workbook, generateRandomId());
+    const before = this.workbook;
+    this.workbook = this.univer.createUnit<object, UniverWorkbook>(UniverInstanceType.UNIVER_SHEET, data);
+    if (before) this.get(IUniverInstanceService).disposeUnit(before.getUnitId());
+    this.blocks ??= new BlockFollower(this.session, this.get(FormulaDataModel), this.get(ICommandService));
+    const progress = this.session.state$.subscribe(({ progress }) => {
+      if (progress?.stage !== FormulaExecuteStageType.CURRENTLY_CALCULATING) return;
+      onProgress(progress.completedFormulasCount, progress.totalFormulasToCalculate);
+    });
+    await this.settled();
+    progress.unsubscribe();
+  }
+
+  save(): Workbook {
+    return fromWorkbook(this.open, this.get(FormulaDataModel), this.get(IDefinedNamesService));
+  }
+
+  /** Resolves when nothing is left to compute. */
+  async settled(): Promise<void> {
+    do await this.session.waitForLatestApplied();
+    while (this.blocks?.pending);
+  }
+
+  /** Sentences behind the errors of cells of a sheet, for those that a function of ours gave. */
+  async sentencesOf(sheetName: string, cells: { row: number; column: number }[]): Promise<PlacedSentence[]> {
+    const sheet = this.sheetNamed(sheetName);
+    if (!sheet) return [];
+    return this.sentences(sheet, cells.flatMap(({ row, column }) => {
+      const [[value]] = this.values(sheet, { startRow: row, endRow: row, startColumn: column, endColumn: column }) as [[CellValue]];
+      return isError(value) ? [{ row, column, code: value.error }] : [];
+    }));
+  }
+
+  dispose(): void {
+    this.univer.dispose();
+  }
+
+  // Reading
+
+  private get open(): UniverWorkbook {
+    if (!this.workbook) throw new Error('No workbook is loaded.');
+    return this.workbook;
+  }
+
+  private find(reference: string): { sheet: Worksheet; range: CellRange } | null {
+    const named = this.get(IDefinedNamesService).getValueByName(this.open.getUnitId(), reference.trim());
+    const parsed = parseReference(named ? named.formulaOrRefString.replace(/^=/, '') : reference);
+    if (!parsed || (named && parsed.sheet === null)) return null;
+    const sheet = parsed.sheet === null ? this.open.getActiveSheet() : this.sheetNamed(parsed.sheet);
+    return sheet ? { sheet, range: parsed.range } : null;
+  }
+
+  private sheetNamed(name: string): Worksheet | undefined {
+    return this.open.getSheets().find((sheet) => sheet.getName().toLowerCase() === name.toLowerCase());
+  }
+
+  private values(sheet: Worksheet, range: CellRange): CellValue[][] {
+    const cells = sheet.getCellMatrix();
+    const spilled = this.get(FormulaDataModel).getArrayFormulaCellData()?.[sheet.getUnitId()]?.[sheet.getSheetId()];
+    const rows: CellValue[][] = [];
+    for (let r = range.startRow; r <= range.endRow; r++) {
+      const row: CellValue[] = [];
+      for (let c = range.startColumn; c <= range.endColumn; c++) {
+        const own = cells.getValue(r, c);
+        row.push(own?.f || own?.si ? plainValue(own) : plainValue(own) ?? plainValue(spilled?.[r]?.[c]));
+      }
+      rows.push(row);
+    }
+    return rows;
+  }
+
+  /**
+   * The sheet keeps only the codes of errors, so the formulas behind them are computed once more while someone listens: what is told is
+   * always what the formula says now.
+   */
+  private async sentences(sheet: Worksheet, errors: PlacedError[]): Promise<PlacedSentence[]> {
+    if (errors.length === 0) return [];
+    await this.idle();
+    const formulas = this.get(FormulaDataModel);
+    const blocks = spills(sheet, formulas);
+    const anchored = errors.map((error) => {
+      const block = blocks.find((one) => holds(one, error));
+      return { ...error, anchorRow: block?.startRow ?? error.row, anchorColumn: block?.startColumn ?? error.column };
+    });
+    const behind: Record<number, Record<number, string[]>> = {};
+    for (const { anchorRow, anchorColumn } of anchored) {
+      const formula = formulaAt(sheet, formulas, anchorRow, anchorColumn);
+      if (formula?.toUpperCase().includes(`${NAMESPACE}.`)) (behind[anchorRow] ??= {})[anchorColumn] = [formula];
+    }
+    const heard = await this.listenTo(sheet, behind);
+    return anchored.flatMap(({ row, column, code, anchorRow, anchorColumn }) => {
+      const sentence = sentenceFor(code, heard.get(formatCell(anchorRow, anchorColumn)) ?? [], row - anchorRow, column - anchorColumn);
+      return sentence === undefined ? [] : [{ row, column, sentence }];
+    });
+  }
+
+  /** What our functions return while formulas are computed, by cell, in the order in which they do. */
+  private async listenTo(sheet: Worksheet, formulas: Record<number, Record<number, string[]>>): Promise<Map<string, unknown[][][]>> {
+    const heard = new Map<string, unknown[][][]>();
+    this.listener.heard = (rows, row, column) => {
+      const cell = formatCell(row, column);
+      heard.set(cell, [...heard.get(cell) ?? [], rows]);
+    };
+    try {
+      await this.get(ICalculateFormulaService).executeFormulas({ [sheet.getUnitId()]: { [sheet.getSheetId()]: formulas } });
+    } finally {
+      this.listener.heard = null;
+      FORMULA_REF_TO_ARRAY_CACHE.clear(); // else the next recalculation would find the values of this one
+    }
+    return heard;
+  }
+
+  /** Resolves when no recalculation is under way. */
+  private idle(): Promise<void> {
+    const { started, resultApplied } = this.session.state;
+    return started && !resultApplied ? this.settled() : Promise.resolve();
+  }
+
+  // Univer's services
+
+  private get session(): FormulaCalculationSessionService {
+    return this.get(FormulaCalculationSessionService);
+  }
+
+  private get get() {
+    const injector = this.univer.__getInjector();
+    return injector.get.bind(injector);
+  }
+
+  private run(command: string, params: object): void {
+    if (!this.get(ICommandService).syncExecuteCommand(command, params)) throw new HostFault('The sheet did not accept the cells.');
+  }
+
+  private inOneStep(change: () => void): void {
+    const batch: IDisposable = this.get(IUndoRedoService).__tempBatchingUndoRedo(this.open.getUnitId());
+    try {
+      change();
+    } finally {
+      batch.dispose();
+    }
+  }
+}
+
+interface PlacedError {
+  row: number;
+  column: number;
+  code: string;
+}
+
+export interface PlacedSentence {
+  row: number;
+  column: number;
+  sentence: string;
+}
+
+const isError = (value: CellValue): value is CellError => typeof value === 'object' && value !== null;
+
+function errorsIn(values: CellValue[][], { startRow, startColumn }: CellRange): PlacedError[] {
+  return values.flatMap((line, r) => line.flatMap((value, c) => (isError(value) ? [{ row: startRow + r, column: startColumn + c, code: value.error }] : [])));
+}
+
+const holds = (range: CellRange, { row, column }: { row: number; column: number }): boolean =>
+  row >= range.startRow && row <= range.endRow && column >= range.startColumn && column <= range.endColumn;
+
+/** The last function called is the outermost; one inside may have given the error that it passed on. */
+function sentenceFor(code: string, heard: unknown[][][], row: number, column: number): string | undefined {
+  for (const rows of heard.toReversed()) {
+    const cell = rows.length === 1 && rows[0]!.length === 1 ? rows[0]![0] : rows[row]?.[column];
+    if (cell instanceof FunctionError && cell.code === code && cell.message) return cell.message;
+  }
+  return undefined;
+}
+
+function inputData(input: CellInput): ICellData {
+  const empty = { f: null, si: null, p: null };
+  if (typeof input === 'object' && input !== null) return { ...empty, f: input.formula, v: null };
+  return { ...empty, ...cellData(input === '' ? null : input) };
+}
