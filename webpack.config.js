@@ -73,7 +73,7 @@ export default (env) => {
   const selfHosted = (env.officejs ?? 'vendor') === 'self';
   const officeJs = selfHosted ? 'office/office.js' : VENDOR_OFFICE_JS;
   const page = (name, template) => new HtmlPlugin({
-    filename: `${name}.html`, template: at(template), chunks: [name], templateParameters: { officeJs, version }, scriptLoading: 'defer',
+    filename: `${name}.html`, template: at(template), chunks: [name], templateParameters: { officeJs, version, development: mode === 'development' }, scriptLoading: 'defer',
   });
 
   const functions = {
@@ -98,7 +98,7 @@ export default (env) => {
     plugins: [
       new MiniCssExtractPlugin(),
       page('pane', 'src/pane/pane.html'),
-      page('workbench', 'src/pane/workbench.html'),
+      page('workbench', 'src/workbench/workbench.html'),
       new webpack.DefinePlugin({ FOLDPLAN_VERSION: JSON.stringify(version) }),
       new CopyPlugin({
         patterns: [
@@ -124,6 +124,7 @@ export default (env) => {
     ...common(name, mode),
     target: 'node20',
     devtool: 'source-map',
+    optimization: { minimize: false },
     entry: { [name]: at(source) },
     output: { path: at('dist-cli'), filename: '[name].cjs', library: { type: 'commonjs2' } },
     module: { rules: [typescript] },

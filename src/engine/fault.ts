@@ -47,6 +47,15 @@ export const faults = {
     input(`from and to leave ${count(candidates)} candidates to compare and at most 100 000 are tried; bring them closer together.`),
   endlessRates: () => input('from must be above 0 for a tone without guard or tolerance, which is usable at rates down to 0; got a blank cell.'),
 
+  notWhole: (argument: string, value: unknown, least: number, most: number) =>
+    input(`${argument} must be a whole number from ${least} to ${most}; got ${shown(value)}.`),
+  nothingWanted: () => input('role must be "wanted" or blank in at least one row; got no such row.'),
+  tooManyRules: (rules: number) =>
+    input(`The plan asks for ${count(BigInt(rules))} rules and at most 500 000 are tried; give fewer rows or a lower order of harmonics.`),
+  tooMuchWork: () => input('The plan forbids too many separate rates between from and to; raise from, lower to, or give a guard.'),
+  noLimit: () => input('to must be given where grid is a step; got a blank cell.'),
+  badGrid: (value: unknown) => input(`grid must hold rates or one step, each above 0; got ${shown(value)}.`),
+
   nothingLands: (folded: number, from: number, to: number) =>
     none(`No frequency from ${shown(from)} to ${shown(to)} lands on ${shown(folded)}.`),
   nothingFits: (from: number, to: number) => none(`No frequency from ${shown(from)} to ${shown(to)} fits every observation.`),
@@ -56,6 +65,11 @@ export const faults = {
     none(`No rate is usable: the band begins at ${shown(edge)}, nearer to the zone edge at 0 than the guard of ${shown(guard)}.`),
   noRateInRange: (from: number, to: number | null) =>
     none(`No rate ${to === null ? `from ${shown(from)} up` : `from ${shown(from)} to ${shown(to)}`} holds the band within one zone.`),
+  overlapBeforeSampling: (one: string, other: string) =>
+    none(`No rate is usable: ${one} and ${other} overlap, or come nearer than the guard, before sampling.`),
+  noPlanRate: (from: number, to: number | null) =>
+    none(`No rate ${to === null ? `from ${shown(from)} up` : `from ${shown(from)} to ${shown(to)}`} keeps every wanted band clear.`),
+  noGridRate: () => none('No rate of the grid keeps every wanted band clear.'),
   noLowestRate: () => none('There is no lowest rate: a tone without guard or tolerance is usable at rates down to 0.'),
   rangesTooNarrow: () => none('The lowest usable ranges are narrower than a cell can show; give a guard or a tolerance.'),
 } as const;
