@@ -12,7 +12,7 @@ type Input = Argument[number][number];
 /** One cell, a column of cells, or rows of cells; null is an argument left out. */
 export type Given = Input | Input[] | Argument;
 
-const asCells = (given: Given): Argument | null => {
+export const asCells = (given: Given): Argument | null => {
   if (given === null) return null;
   if (!Array.isArray(given)) return [[given]];
   return given.map((line) => (Array.isArray(line) ? line : [line]));
