@@ -95,8 +95,11 @@ export default (env) => {
     entry: { pane: at('src/main-office.ts'), workbench: at('src/main-workbench.ts') },
     output: { path: at('dist'), filename: '[name].js', chunkFilename: '[name].[contenthash].js', assetModuleFilename: 'assets/[name][ext]' },
     module: { rules: [typescript, { test: /\.css$/, use: [MiniCssExtractPlugin.loader, 'css-loader'] }] },
+    optimization: { nodeEnv: 'production' }, // packages as they are shipped, with no advice on the console
     plugins: [
       new MiniCssExtractPlugin(),
+      // Rules for hyphens in sixty languages: a sheet asks for none but these.
+      new webpack.IgnorePlugin({ resourceRegExp: /^\.\/(?!en-gb-)[a-z]{2,3}(-[a-z0-9]+)*-[\w-]{8}\.js$/, contextRegExp: /engine-render/ }),
       page('pane', 'src/pane/pane.html'),
       page('workbench', 'src/workbench/workbench.html'),
       new webpack.DefinePlugin({ FOLDPLAN_VERSION: JSON.stringify(version) }),

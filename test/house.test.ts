@@ -17,8 +17,9 @@ const MAY_IMPORT: Record<string, readonly string[]> = {
   'host/file': ['host/port'],
   pane: ['engine', 'host/port'],
   help: [],
+  workbench: [],
   'demo-plan': ['host/port'],
-  main: ['engine', 'functions', 'host/port', 'host/office', 'host/sheet', 'host/file', 'pane', 'demo-plan'],
+  main: ['engine', 'functions', 'host/port', 'host/office', 'host/sheet', 'host/file', 'pane', 'workbench', 'demo-plan'],
 };
 
 /** The part that a source file belongs to; undefined for a file that knows no room. */

@@ -5,7 +5,7 @@ import {
   IUniverInstanceService, UniverInstanceType, generateRandomId,
 } from '@univerjs/core';
 import { FORMULA_REF_TO_ARRAY_CACHE, FormulaDataModel, FormulaExecuteStageType, ICalculateFormulaService, IDefinedNamesService } from '@univerjs/engine-formula';
-import { SetRangeValuesCommand, SetWorksheetColumnCountCommand, SetWorksheetRowCountCommand } from '@univerjs/sheets';
+import { SetRangeValuesCommand, SetWorksheetColumnCountCommand, SetWorksheetRowCountCommand, SheetsSelectionsService } from '@univerjs/sheets';
 import { FormulaCalculationSessionService } from '@univerjs/sheets-formula';
 import { type Block, type CellError, type CellInput, type CellValue, type Host, type Workbook, HostFault } from '../port';
 import { type CellRange, formatCell, formatRange, parseReference } from './address';
@@ -29,12 +29,7 @@ export class SheetHost implements Host {
 
   async read(reference: string): Promise<Block | null> {
     const place = this.find(reference);
-    if (!place) return null;
-    const { sheet, range } = place;
-    const values = this.values(sheet, range);
-    const sentences = await this.sentences(sheet, errorsIn(values, range));
-    for (const { row, column, sentence } of sentences) (values[row - range.startRow]![column - range.startColumn] as CellError).message = sentence;
-    return { sheet: sheet.getName(), address: formatRange(range), values };
+    return place && this.readCells(place.sheet, place.range);
   }
 
   async write(reference: string, cells: CellInput[][]): Promise<void> {
@@ -90,6 +85,26 @@ export class SheetHost implements Host {
     while (this.blocks?.pending);
   }
 
+  /** Calls `listener` after every change that a user or a write makes, until the returned function is called. */
+  onEdited(listener: () => void): () => void {
+    const subscription = this.get(ICommandService).onMutationExecutedForCollab(() => listener());
+    return () => subscription.dispose();
+  }
+
+  /** Calls `listener` after another cell is selected, until the returned function is called. */
+  onSelected(listener: () => void): () => void {
+    const subscription = this.get(SheetsSelectionsService).selectionChanged$.subscribe(() => listener());
+    return () => subscription.unsubscribe();
+  }
+
+  /** The cell that the user is at, as the port reads it; null where there is none. */
+  selectedCell(): Promise<Block | null> {
+    const primary = this.get(SheetsSelectionsService).getCurrentLastSelection()?.primary;
+    if (!primary) return Promise.resolve(null);
+    const { actualRow: row, actualColumn: column } = primary;
+    return this.readCells(this.open.getActiveSheet(), { startRow: row, endRow: row, startColumn: column, endColumn: column });
+  }
+
   /** Sentences behind the errors of cells of a sheet, for those that a function of ours gave. */
   async sentencesOf(sheetName: string, cells: { row: number; column: number }[]): Promise<PlacedSentence[]> {
     const sheet = this.sheetNamed(sheetName);
@@ -109,6 +124,13 @@ export class SheetHost implements Host {
   private get open(): UniverWorkbook {
     if (!this.workbook) throw new Error('No workbook is loaded.');
     return this.workbook;
+  }
+
+  private async readCells(sheet: Worksheet, range: CellRange): Promise<Block> {
+    const values = this.values(sheet, range);
+    const sentences = await this.sentences(sheet, errorsIn(values, range));
+    for (const { row, column, sentence } of sentences) (values[row - range.startRow]![column - range.startColumn] as CellError).message = sentence;
+    return { sheet: sheet.getName(), address: formatRange(range), values };
   }
 
   private find(reference: string): { sheet: Worksheet; range: CellRange } | null {
