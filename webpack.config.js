@@ -15,6 +15,7 @@ import CustomFunctionsMetadataPlugin from 'custom-functions-metadata-plugin';
 import HtmlPlugin from 'html-webpack-plugin';
 import MiniCssExtractPlugin from 'mini-css-extract-plugin';
 import webpack from 'webpack';
+import { manifestFor } from './manifest/manifest-for.js';
 import { helpPage } from './src/help/help-page.js';
 
 const root = import.meta.dirname;
@@ -27,7 +28,10 @@ const VENDOR_OFFICE_JS = 'https://appsforoffice.microsoft.com/lib/1/hosted/offic
 /** Source files that hold worksheet functions, in the order of the function list. */
 const FAMILIES = ['landing', 'rates'].map((family) => at('src/functions', `${family}.ts`));
 
-/** The part of the vendor's package that a self-hosted Office.js consists of; the rest is typings, debug builds and other hosts. */
+/**
+ * The part of the vendor's package that a self-hosted Office.js consists of. The rest is typings, debug builds, other hosts, and the
+ * script that reports on the use of add-ins: it is left out on purpose, and the library does without.
+ */
 const OFFICE_FILES = [
   'office.js', 'excel-web-16.00.js', 'excel-win32-16.01.js', 'excel-mac-16.00.js', 'o15apptofilemappingtable.js',
   'custom-functions-runtime.js', '*/office_strings.js',
@@ -55,6 +59,12 @@ class FunctionsJson {
   }
 }
 
+/** The development certificate that Excel wants. Where there is none yet it is made and installed, which asks the user for leave. */
+async function certificate() {
+  const { getHttpsServerOptions } = await import('office-addin-dev-certs');
+  return getHttpsServerOptions();
+}
+
 const typescript = { test: /\.ts$/, exclude: /node_modules/, use: { loader: 'ts-loader', options: { transpileOnly: true } } };
 
 const common = (name, mode) => ({
@@ -67,7 +77,7 @@ const common = (name, mode) => ({
   cache: { type: 'filesystem', cacheDirectory: at('.cache'), name: `${name}-${mode}`, buildDependencies: { config: [import.meta.filename] } },
 });
 
-export default (env) => {
+export default async (env) => {
   const mode = env.development ? 'development' : 'production';
   const base = (env.base ?? 'https://localhost:3000').replace(/\/+$/, '');
   const selfHosted = (env.officejs ?? 'vendor') === 'self';
@@ -106,7 +116,7 @@ export default (env) => {
       new CopyPlugin({
         patterns: [
           { from: at('assets'), to: 'assets' },
-          { from: at('manifest/manifest.xml'), to: 'manifest.xml', transform: (text) => text.toString().replaceAll('{{base}}', base).replaceAll('{{version}}', `${version}.0`) },
+          { from: at('manifest/manifest.xml'), to: 'manifest.xml', transform: () => manifestFor(base, version) },
           ...(selfHosted
             ? OFFICE_FILES.map((from) => ({ from, to: 'office', context: path.dirname(require.resolve('@microsoft/office-js/dist/office.js')) }))
             : []),
@@ -118,7 +128,7 @@ export default (env) => {
       open: env.excel ? false : ['/workbench.html'],
       static: false,
       client: { overlay: false },
-      ...(env.excel ? { server: { type: 'https', options: env.excel } } : {}),
+      ...(env.excel ? { server: { type: 'https', options: await certificate() }, headers: { 'access-control-allow-origin': '*' } } : {}),
     },
   };
 
