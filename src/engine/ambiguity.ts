@@ -2,11 +2,11 @@
 // They are a comb: the folded interval and, at real sampling, its mirror, repeated at every multiple of the rate.
 
 import { readRate } from './band';
+import { checkListing } from './counts';
 import { faults } from './fault';
 import { type Sampling, isEven, zoneExactly } from './folding';
 import { type Interval, interval, isEmpty, mirror, shift } from './interval';
 import { type IntervalSet, intersection, union } from './interval-set';
-import { checkListing } from './listing';
 import { type Rational, ZERO, add, ceiling, compare, divide, floor, fromNumber, greatest, half, least, negate, subtract, times, toNumber } from './rational';
 
 const MOST_CANDIDATES = 100_000n;

@@ -142,10 +142,14 @@ export function bandCheck(low: number, high: number, rate: number, guard = 0, pp
 export function bandGap(low: number, high: number, otherLow: number, otherHigh: number, rate: number, sampling: Sampling = 'real'): number {
   const band = readBand(low, high);
   const other = readBand(otherLow, otherHigh, 'otherLow', 'otherHigh');
-  const fs = readRate(rate);
-  const distances = [foldExactly(subtract(centre(band), centre(other)), fs, 'real')];
-  if (sampling === 'real') distances.push(foldExactly(add(centre(band), centre(other)), fs, 'real'));
-  return toNumber(subtract(distances.reduce(least), half(add(width(band), width(other)))));
+  return toNumber(imageGap(band, other, readRate(rate), sampling));
+}
+
+/** bandGap on fractions. */
+export function imageGap(band: Interval, other: Interval, rate: Rational, sampling: Sampling): Rational {
+  const distances = [foldExactly(subtract(centre(band), centre(other)), rate, 'real')];
+  if (sampling === 'real') distances.push(foldExactly(add(centre(band), centre(other)), rate, 'real'));
+  return subtract(distances.reduce(least), half(add(width(band), width(other))));
 }
 
 /** The largest clock tolerance at which a band still has a margin of 0 or more, as a fraction of the rate; null where it already fails. */

@@ -47,12 +47,19 @@ export const faults = {
     input(`from and to leave ${count(candidates)} candidates to compare and at most 100 000 are tried; bring them closer together.`),
   endlessRates: () => input('from must be above 0 for a tone without guard or tolerance, which is usable at rates down to 0; got a blank cell.'),
 
-  notWhole: (argument: string, value: unknown, least: number, most: number) =>
-    input(`${argument} must be a whole number from ${least} to ${most}; got ${shown(value)}.`),
+  notCount: (argument: string, value: unknown, most: number) =>
+    input(`${argument} must be a whole number${most === Infinity ? ', 1 or more' : ` from 1 to ${most}`}; got ${shown(value)}.`),
   nothingWanted: () => input('role must be "wanted" or blank in at least one row; got no such row.'),
   tooManyRules: (rules: number) =>
     input(`The plan asks for ${count(BigInt(rules))} rules and at most 500 000 are tried; give fewer rows or a lower order of harmonics.`),
   tooMuchWork: () => input('The plan forbids too many separate rates between from and to; raise from, lower to, or give a guard.'),
+  tooFewTones: (got: number) => input(`frequencies must hold at least two tones; got ${got}.`),
+  tooManyProducts: (products: bigint) =>
+    input(`The tones have ${count(products)} products up to this order and at most 200 000 are tried; lower order or give fewer tones.`),
+  tooManyPairs: (pairs: bigint) =>
+    input(`multiply and divide leave ${count(pairs)} ratios and at most 1 000 000 are tried; lower them or bring from and to closer together.`),
+  outsideFirstZone: (argument: string, value: number, highest: number) =>
+    input(`${argument} must be from 0 to ${shown(highest)}, half the rate; got ${shown(value)}.`),
   noLimit: () => input('to must be given where grid is a step; got a blank cell.'),
   badGrid: (value: unknown) => input(`grid must hold rates or one step, each above 0; got ${shown(value)}.`),
 
@@ -70,6 +77,9 @@ export const faults = {
   noPlanRate: (from: number, to: number | null) =>
     none(`No rate ${to === null ? `from ${shown(from)} up` : `from ${shown(from)} to ${shown(to)}`} keeps every wanted band clear.`),
   noGridRate: () => none('No rate of the grid keeps every wanted band clear.'),
+  noClockRate: (from: number, to: number) => none(`No ratio gives a rate from ${shown(from)} to ${shown(to)}.`),
+  nothingExplains: (observed: number, order: number, nearest: string, miss: number) =>
+    none(`No product up to order ${order} lands on ${shown(observed)} within the tolerance; the nearest, ${nearest}, misses by ${shown(miss)}.`),
   noLowestRate: () => none('There is no lowest rate: a tone without guard or tolerance is usable at rates down to 0.'),
   rangesTooNarrow: () => none('The lowest usable ranges are narrower than a cell can show; give a guard or a tolerance.'),
 } as const;

@@ -2,8 +2,12 @@
 
 export { type FrequencyRange, type Source, imagesOf, resolveFrequency } from './ambiguity';
 export { bandCheck, bandGap, bandInverted, bandMargin, bandZone, imageHigh, imageLow } from './band';
+export { type ClockRate, clockRates } from './clock-rates';
 export { Fault, faults } from './fault';
 export { type Sampling, foldedFrequency, frequencyZone, isInverted } from './folding';
+export { type Hold, type OutputImage, holdLevel, outputImages } from './hold';
 export { type BrokenRule, type Conflict, type PlanRange, type RankedRate, conflicts, headroom, planRates, rankRates } from './plan';
+export { type Product, type Suspect, intermodulation, suspectsOf } from './products';
 export { type Plan, type Role } from './rules';
 export { type RateRange, clockTolerance, lowestRate, usableRates } from './single-band-rates';
+export { type Harmonic, type InterleavingSpur, type MixingProduct, harmonicsOf, interleavingSpurs, mixingProducts } from './spurs';

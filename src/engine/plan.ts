@@ -3,9 +3,9 @@
 
 import { inPpm, readGuard, readRate, readTolerance } from './band';
 import { type FreeRange, carve } from './carve';
+import { checkCount, checkListing } from './counts';
 import { faults, shown } from './fault';
 import { centre } from './interval';
-import { checkListing } from './listing';
 import {
   ONE, type Rational, ZERO, absolute, add, ceiling, compare, divide, floor, fromNumber, greatest, half, least, multiply, rational, roundDown, roundUp, subtract,
   times, toNumber,
@@ -65,7 +65,7 @@ export interface RankedRate {
 export function rankRates(plan: Plan, grid: number | readonly number[], from = 0, to: number | null = null, ppm = 0, most = 10): RankedRate[] {
   for (const rate of typeof grid === 'number' ? [grid] : grid) if (!(rate > 0)) throw faults.badGrid(rate);
   if (typeof grid === 'number' && to === null) throw faults.noLimit();
-  if (!(Number.isInteger(most) && most >= 1 && most <= 10_000)) throw faults.notWhole('count', most, 1, 10_000);
+  checkCount('count', most, 10_000);
   const tolerance = readTolerance(ppm);
   const guard = readGuard(plan.guard);
   const rules = checkedRules(plan);

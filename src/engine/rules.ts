@@ -2,10 +2,11 @@
 // no multiple of rate/divisor, but for the exempt ones, may lie inside an open interval of frequencies.
 
 import { folds, readBand, readGuard } from './band';
+import { checkCount } from './counts';
 import { faults } from './fault';
 import { type Sampling } from './folding';
-import { type Interval, centre, interval, mirror } from './interval';
-import { type Rational, add, negate, subtract, times } from './rational';
+import { type Interval, centre, interval, mirror, multiple } from './interval';
+import { type Rational, add, negate, subtract } from './rational';
 
 export type Role = 'wanted' | 'unwanted' | 'ignore';
 
@@ -51,8 +52,8 @@ const MOST_RULES = 500_000;
 export function rulesOf(plan: Plan): Rule[] {
   const { sampling, harmonics, cores } = plan;
   const guard = readGuard(plan.guard);
-  checkWhole('harmonics', harmonics, 20);
-  checkWhole('cores', cores, 64);
+  checkCount('harmonics', harmonics, 20);
+  checkCount('cores', cores, 64);
   const bands = readBands(plan);
   const wanted = bands.filter(({ role }) => role === 'wanted');
   if (wanted.length === 0) throw faults.nothingWanted();
@@ -75,13 +76,6 @@ export function rulesOf(plan: Plan): Rule[] {
     }
   }
   return rules;
-}
-
-/** The n-th harmonic of a band. */
-export const multiple = ({ low, high }: Interval, n: number): Interval => interval(times(low, BigInt(n)), times(high, BigInt(n)));
-
-function checkWhole(argument: string, value: number, most: number): void {
-  if (!(Number.isInteger(value) && value >= 1 && value <= most)) throw faults.notWhole(argument, value, 1, most);
 }
 
 function readBands({ low, high, role, sampling }: Plan): { row: number; band: Interval; role: Role }[] {

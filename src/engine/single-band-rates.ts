@@ -5,10 +5,10 @@
 // 2(b+g)/(z(1−t)) to 2(a−g)/((z−1)(1+t)). At IQ sampling the same holds with 2z−1 and 2z+1 for z−1 and z: the edges in half rates.
 
 import { folds, inPpm, largestTolerance, readBand, readGuard, readRate, readTolerance } from './band';
+import { checkListing } from './counts';
 import { faults } from './fault';
 import { type Sampling, isEven } from './folding';
 import { type Interval, centre } from './interval';
-import { checkListing } from './listing';
 import {
   ONE, type Rational, ZERO, add, ceiling, compare, divide, floor, fromNumber, greatest, least, multiply, roundDown, roundUp, subtract, times, toNumber,
 } from './rational';
