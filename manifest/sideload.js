@@ -12,19 +12,19 @@ const MAC_FOLDER = 'Library/Containers/com.microsoft.Excel/Data/Documents/wef';
 const WINDOWS_KEY = 'HKCU\\SOFTWARE\\Microsoft\\Office\\16.0\\WEF\\Developer';
 
 /**
- * @param {{ platform: string, home: string, run: (program: string, args: string[]) => void, remove: boolean }} computer
+ * @param {{ platform: string, home: string, cache: string, run: (program: string, args: string[]) => void, remove: boolean }} computer
+ *   cache: folder for the file that Windows is pointed to
  * @returns {string} what was done, for the user
  * @throws {Error} with a sentence for the user
  */
-export function sideload({ platform, home, run, remove }) {
+export function sideload({ platform, home, cache, run, remove }) {
   const { version } = JSON.parse(readFileSync(path.join(root, 'package.json'), 'utf8'));
   const manifest = manifestFor('https://localhost:3000', version);
   const id = /<Id>(.*)<\/Id>/.exec(manifest)[1];
   if (platform !== 'darwin' && platform !== 'win32') {
     throw new Error('Excel runs on Windows and Mac; on this computer npm start opens the workbench instead.');
   }
-  // A Mac takes the file itself, Windows the path of one that stays with us.
-  const folder = platform === 'darwin' ? path.join(home, MAC_FOLDER) : path.join(root, '.cache');
+  const folder = platform === 'darwin' ? path.join(home, MAC_FOLDER) : cache;
   const file = path.join(folder, `${id}.manifest.xml`);
   if (remove) {
     rmSync(file, { force: true });
@@ -40,7 +40,8 @@ export function sideload({ platform, home, run, remove }) {
 if (process.argv[1] === import.meta.filename) {
   try {
     const run = (program, args) => execFileSync(program, args, { stdio: ['ignore', 'ignore', 'inherit'] });
-    console.log(sideload({ platform: process.platform, home: os.homedir(), run, remove: process.argv.includes('--remove') }));
+    const remove = process.argv.includes('--remove');
+    console.log(sideload({ platform: process.platform, home: os.homedir(), cache: path.join(root, '.cache'), run, remove }));
   } catch (error) {
     console.error(error.message);
     process.exitCode = 1;
