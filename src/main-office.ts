@@ -1,1 +1,22 @@
-export {};
+// The pane inside the spreadsheet program. functions.js, loaded by the same page, has registered the worksheet functions by now.
+
+import { OfficeHost } from './host/office/office-host';
+import { mountPane } from './pane';
+
+const root = document.getElementById('pane')!;
+
+if (typeof Office === 'undefined') {
+  tell('Office.js did not load, so the pane cannot reach the spreadsheet. Check the connection to its address, or use a build that carries its own copy.');
+} else {
+  void Office.onReady(async ({ host }) => {
+    if (host === Office.HostType.Excel) await mountPane(new OfficeHost(), root);
+    else tell('This page is the pane of the Foldplan add-in: it works inside a spreadsheet program. Without one, open workbench.html of this site.');
+  });
+}
+
+function tell(sentence: string): void {
+  const paragraph = document.createElement('p');
+  paragraph.setAttribute('role', 'alert');
+  paragraph.textContent = sentence;
+  root.replaceChildren(paragraph);
+}

@@ -1,0 +1,186 @@
+// The built site in the spreadsheet program's own, unmodified runtime, under a page that plays the program on the web.
+
+import { execFileSync } from 'node:child_process';
+import { readFileSync } from 'node:fs';
+import path from 'node:path';
+import type { Browser } from 'playwright-core';
+import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import type { Workbook } from '../../src/host/port';
+import type { FunctionMetadata } from '../../src/host/sheet/functions-runtime';
+import { launchBrowser, outputFile, siteFile, watch } from '../support/browser';
+import { FULL_CALLS, asCells } from '../support/built-functions';
+import { contractWorkbook } from '../support/host-contract';
+import { type WebHost, openInWebHost } from '../support/played-excel/web-host';
+import { WorkbookModel } from '../support/played-excel/workbook-model';
+
+const BASE = 'https://plan.example/tools/foldplan';
+const site = outputFile('self-hosted');
+
+let browser: Browser;
+let functions: FunctionMetadata[];
+beforeAll(async () => {
+  execFileSync('npx', [
+    'webpack', '--config-name', 'functions', '--config-name', 'site', '--env', 'development', '--env', 'officejs=self', '--env', `base=${BASE}`,
+    '-o', site, '--stats', 'errors-only',
+  ], { stdio: 'inherit' });
+  functions = JSON.parse(readFileSync(path.join(site, 'functions.json'), 'utf8')).functions;
+  browser = await launchBrowser();
+});
+afterAll(() => browser?.close());
+
+/** What the calls of FULL_CALLS give: worked by hand from the definitions. */
+const GIVES: Record<string, unknown[][]> = {
+  FREQ:      [[30]],
+  ZONE:      [[2]],
+  INVERTED:  [[true]],
+  LOW:       [[10]],
+  HIGH:      [[40]],
+  MARGIN:    [[7.9]],
+  CHECK:     [['clear']],
+  GAP:       [[-10]],
+  BAND:      [[10, 40, 2, true, 7.9, 'clear']],
+  IMAGES:    [[30, 1, false], [70, 2, true], [130, 3, false]],
+  RESOLVE:   [[69.5, 70.5], [490.5, 490.5], [630.5, 630.5]],
+  RATES:     [[3, 15.0668173348401, 17.3998260017399, 2.3330086668998, false], [2, 22.6002260022601, 34.7996520034799, 12.1994260012198, true]],
+  MINRATE:   [[11.3001130011301]],
+  TOLERANCE: [[80000]],
+};
+
+describe('the worksheet functions in the real runtime', () => {
+  let host: WebHost;
+  beforeAll(async () => {
+    host = await openInWebHost(browser, site, BASE, played(contractWorkbook));
+  });
+  afterAll(() => host?.close());
+
+  it('give what they should, each of them', async () => {
+    const given = await Promise.all(functions.map(async ({ id, parameters }) => {
+      const outcome = await host.call(id, parameters.map((_, i) => asCells(FULL_CALLS[id]![i] ?? null)));
+      return [id, outcome.succeeded ? outcome.value : outcome];
+    }));
+    expect(Object.fromEntries(given)).toEqual(GIVES);
+  });
+
+  it('take every optional argument as left out', async () => {
+    await Promise.all(functions.map(async ({ id, parameters }) => {
+      const outcome = await host.call(id, parameters.map(({ optional }, i) => (optional ? null : asCells(FULL_CALLS[id]![i]!))));
+      expect([id, outcome]).toEqual([id, { succeeded: true, value: expect.arrayContaining([expect.any(Array)]) }]);
+      expect(JSON.stringify(outcome), id).not.toContain('Error');
+    }));
+  });
+
+  const refusal = { code: '#VALUE!', errorType: 'Value', message: 'frequency must be a number; got "fast".' };
+
+  it('keep an error, its sentence and blank cells in their rows of a spilled column', async () => {
+    const column = [[70], ['fast'], [null], [''], [{ type: 'CustomFunctionError', code: '#REF!' }], [130]];
+    expect(await host.call('FREQ', [column, [[100]], null])).toEqual({
+      succeeded: true,
+      value: [[30], [expect.objectContaining(refusal)], [''], [''], [expect.objectContaining({ code: '#REF!', errorType: 'Ref' })], [30]],
+    });
+  });
+
+  it('pass the sentence on where the error is the only cell', async () => {
+    expect(await host.call('FREQ', [[['fast']], [[100]], null])).toEqual({ succeeded: true, value: [[expect.objectContaining(refusal)]] });
+  });
+
+  it('pass the sentence on where a whole table is an error', async () => {
+    const INVALID_VALUE = 7;
+    const NOT_AVAILABLE = 1;
+    expect(await host.call('RATES', [[[2]], [[1]], null, null, null, null, null, null])).toEqual(
+      { succeeded: false, code: INVALID_VALUE, sentence: 'low must not be above high; got 2 and 1.' });
+    expect(await host.call('IMAGES', [[[30]], [[100]], [[31]], [[69]], null, null])).toEqual(
+      { succeeded: false, code: NOT_AVAILABLE, sentence: 'No frequency from 31 to 69 lands on 30.' });
+  });
+
+  it('give a spilled column of 10 000 rows in one call', async () => {
+    const outcome = await host.call('FREQ', [Array.from({ length: 10_000 }, (_, i) => [i]), [[100]], null]);
+    expect(outcome).toMatchObject({ succeeded: true });
+    const rows = outcome.succeeded ? (outcome.value as number[][]) : [];
+    expect([rows.length, rows[70], rows[9_999]]).toEqual([10_000, [30], [1]]);
+  });
+
+  it('say nothing on the console, and ask for nothing that the site does not hold', () => {
+    expect(host.watched).toEqual({ console: [], strayRequests: [] });
+  });
+});
+
+describe('the pane in the real runtime', () => {
+  const plan: Workbook = {
+    ...contractWorkbook,
+    sheets: [{
+      ...contractWorkbook.sheets[0]!,
+      cells: {
+        0: { 0: { value: 'Beacon' }, 1: { value: 60 }, 2: { value: 90 } },
+        1: { 0: { value: 'Relay' }, 1: { value: 110 }, 2: { value: 120 } },
+        2: { 0: { value: 'rate' }, 1: { value: 100 } },
+      },
+    }],
+    names: { Fold_Name: 'Plan!$A$1:$A$2', Fold_Low: 'Plan!$B$1:$B$2', Fold_High: 'Plan!$C$1:$C$2', Fold_Rate: 'Plan!$B$3' },
+  };
+  let host: WebHost;
+  afterEach(() => host?.close());
+
+  it('draws the plan of the workbook, follows a new rate and says nothing on the console', async () => {
+    const workbook = played(plan);
+    host = await openInWebHost(browser, site, BASE, workbook);
+    const pane = host.addIn.locator('#pane');
+    await pane.getByText('Beacon').first().waitFor();
+    const before = await pane.innerText();
+    await host.page.screenshot({ path: outputFile('pane-in-web-host.png') });
+    workbook.range('Fold_Rate')!.Formulas = [[250]];
+    await expect.poll(() => pane.innerText()).not.toBe(before);
+    expect(await pane.innerText()).toContain('250');
+    expect(host.watched).toEqual({ console: [], strayRequests: [] });
+  });
+});
+
+describe('a site that carries its own Office.js', () => {
+  // How each program tells the client library what it is; the library then fetches its own parts.
+  it.each([
+    'Excel$Win32$16.01$en-US', 'Excel$Win32$16.01$de-DE', 'Excel$Mac$16.00$ja-JP', 'Excel$Web$16.01$sr-Cyrl-RS', 'Excel$Web$16.01$xx-XX',
+  ])('holds every file that %s asks for', async (program) => {
+    const page = await openPane(`?_host_Info=${encodeURIComponent(program)}$correlation$telemetry$$`);
+    await page.waitForFunction(() => 'OfficeExtension' in window);
+    expect(page.watched.strayRequests).toEqual([]);
+    await page.context().close();
+  });
+
+  it('asks its own address alone where the program wants usage reports, and has no part that sends them', async () => {
+    const host = await openInWebHost(browser, site, BASE, played(contractWorkbook), { usageReports: true });
+    await host.addIn.locator('#pane').getByText('Fold_Rate').waitFor();
+    expect(host.watched.strayRequests).toEqual([`404 ${BASE}/office/telemetry/oteljs_agave.js`]);
+    await host.close();
+  });
+
+  it('says what it is when it is opened outside a spreadsheet program', async () => {
+    const page = await openPane('');
+    await page.getByRole('alert').waitFor();
+    expect(await page.locator('#pane').innerText()).toMatch(/^This page is the pane of the Foldplan add-in: it works inside a spreadsheet program\./);
+    expect(page.watched.strayRequests).toEqual([]);
+    await page.context().close();
+  });
+
+  it('says so when Office.js does not load', async () => {
+    const page = await openPane('', (pathname) => pathname.endsWith('/office.js'));
+    await page.getByRole('alert').waitFor();
+    expect(await page.locator('#pane').innerText()).toMatch(/^Office\.js did not load, so the pane cannot reach the spreadsheet\./);
+    await page.context().close();
+  });
+
+  /** The add-in's page by itself. */
+  async function openPane(query: string, missing: (pathname: string) => boolean = () => false) {
+    const context = await browser.newContext();
+    await context.route('**/*', (route) => {
+      const { href, pathname } = new URL(route.request().url());
+      const file = href.startsWith(`${BASE}/`) && !missing(pathname) ? siteFile(pathname.slice(new URL(BASE).pathname.length), site) : null;
+      return file ? route.fulfill(file) : route.fulfill({ status: 404 });
+    });
+    const page = await context.newPage();
+    const watched = watch(page, BASE);
+    await page.goto(`${BASE}/pane.html${query}`);
+    return Object.assign(page, { watched });
+  }
+});
+
+/** A workbook without formulas that need computing. */
+const played = (workbook: Workbook): WorkbookModel => new WorkbookModel(structuredClone(workbook), () => [[0]]);
