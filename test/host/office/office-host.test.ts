@@ -132,14 +132,14 @@ describe('what the spreadsheet program refuses', () => {
 });
 
 describe('when the spreadsheet program fails half-way', () => {
-  /** Everything that is easily lost: a spilled column and its neighbours, texts like formulas, text formats, errors, blanks. */
+  /** Everything that is easily lost: a spilled column and its neighbours, texts like formulas, values in cells for text, errors, blanks. */
   const precious = (): ReturnType<typeof open> => {
     const opened = open(planWith({
       0: { 0: { value: 70 }, 1: { value: null, formula: '=FOLD.FREQ(A1:A3,Rate)' }, 2: { value: '=1+1' }, 3: { value: { error: '#N/A' } } },
       1: { 0: { value: 130 }, 2: { value: '007' }, 3: { value: true } },
       2: { 0: { value: 170 }, 2: { value: '#N/A' } },
     }));
-    opened.workbook.range('Plan!C1:C3')!.NumberFormat = [['@'], ['0.0'], ['@']];
+    opened.workbook.range('Plan!C1:D3')!.NumberFormat = [['@', 'General'], ['0.0', '@'], ['@', '0.0']];
     return opened;
   };
   const reference = 'Plan!A1:D3';
