@@ -44,8 +44,8 @@ export class SheetHost implements Host {
     }
     const target = { unitId: sheet.getUnitId(), subUnitId: sheet.getSheetId() };
     this.inOneStep(() => {
-      this.run(SetWorksheetRowCountCommand.id, { ...target, rowCount: Math.max(sheet.getRowCount(), range.endRow + 1) });
-      this.run(SetWorksheetColumnCountCommand.id, { ...target, columnCount: Math.max(sheet.getColumnCount(), range.endColumn + 1) });
+      if (range.endRow >= sheet.getRowCount()) this.run(SetWorksheetRowCountCommand.id, { ...target, rowCount: range.endRow + 1 });
+      if (range.endColumn >= sheet.getColumnCount()) this.run(SetWorksheetColumnCountCommand.id, { ...target, columnCount: range.endColumn + 1 });
       this.run(SetRangeValuesCommand.id, { ...target, range, value: cells.map((row) => row.map(inputData)) });
     });
   }
@@ -87,7 +87,9 @@ export class SheetHost implements Host {
 
   /** Calls `listener` after every change that a user or a write makes, until the returned function is called. */
   onEdited(listener: () => void): () => void {
-    const subscription = this.get(ICommandService).onMutationExecutedForCollab(() => listener());
+    const subscription = this.get(ICommandService).onMutationExecutedForCollab((_mutation, options) => {
+      if (!options?.onlyLocal) listener(); // results of formulas stay local
+    });
     return () => subscription.dispose();
   }
 

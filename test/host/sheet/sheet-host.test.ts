@@ -1,14 +1,169 @@
-import { readFileSync } from 'node:fs';
-import path from 'node:path';
-import { loadFunctions } from '../../../src/host/sheet/functions-runtime';
+import { ICommandService, IUniverInstanceService, UndoCommand, UniverInstanceType } from '@univerjs/core';
+import { afterEach, describe, expect, it } from 'vitest';
 import { openHeadless } from '../../../src/host/sheet/headless';
-import { dist } from '../../support/browser';
+import type { SheetHost } from '../../../src/host/sheet/sheet-host';
+import type { CellInput, Workbook } from '../../../src/host/port';
+import { demoPlan } from '../../../src/demo-plan';
+import { built } from '../../support/built-functions';
 import { testHost } from '../../support/host-contract';
-
-const functions = loadFunctions(JSON.parse(readFileSync(path.join(dist, 'functions.json'), 'utf8')), readFileSync(path.join(dist, 'functions.js'), 'utf8'));
+import { planOf } from '../../support/workbook';
 
 testHost('the embedded sheet', async (workbook) => {
-  const host = openHeadless(functions);
-  await host.load(workbook);
+  const host = await open(workbook);
   return { host, settle: () => host.settled(), close: async () => host.dispose() };
+});
+
+async function open(workbook: Workbook): Promise<SheetHost> {
+  const host = openHeadless(built);
+  await host.load(workbook);
+  return host;
+}
+
+describe('the embedded sheet', () => {
+  let host: SheetHost;
+  afterEach(() => host.dispose());
+
+  const read = async (reference: string) => (await host.read(reference))?.values;
+  const undo = async () => {
+    const unit = host.univer.__getInjector().get(IUniverInstanceService);
+    unit.focusUnit(unit.getCurrentUnitOfType(UniverInstanceType.UNIVER_SHEET)!.getUnitId());
+    await host.univer.__getInjector().get(ICommandService).executeCommand(UndoCommand.id);
+    await host.settled();
+  };
+
+  it('reads numbers to the last digit, booleans as booleans, blanks of formulas as ""', async () => {
+    host = await open(planOf([[0.1, 122.88000000000001, true, false, '=FOLD.INVERTED(70,100)', '=FOLD.FREQ(Z1,100)', '=FOLD.FREQ(0.3,0.2)', null, 'text']]));
+    expect(await read('A1:I1')).toEqual([[0.1, 122.88000000000001, true, false, true, '', 0.1, null, 'text']]);
+  });
+
+  it('reads errors as objects, with the sentence of our functions, and text that looks like one as text', async () => {
+    host = await open(planOf([['fast', '=FOLD.FREQ(A1:A3,100)', '=1/0', { value: { error: '#N/A' } }, '#N/A'], [70], ['=C1']]));
+    const sentence = 'frequency must be a number; got "fast".';
+    expect(await read('B1:E1')).toEqual([[{ error: '#VALUE!', message: sentence }, { error: '#DIV/0!' }, { error: '#N/A' }, '#N/A']]);
+    expect(await read('B1:B3')).toEqual([[{ error: '#VALUE!', message: sentence }], [30], [{ error: '#DIV/0!' }]]);
+  });
+
+  it('tells the sentence that is true now', async () => {
+    host = await open(planOf([['fast', '=FOLD.FREQ(A1,Rate)', 100]], { Rate: 'Plan!$C$1' }));
+    await host.write('A1', [['slow']]);
+    await host.settled();
+    expect(await read('B1')).toEqual([[{ error: '#VALUE!', message: 'frequency must be a number; got "slow".' }]]);
+    await host.write('A1:C1', [[70, { formula: '=FOLD.FREQ(A1,Rate)' }, -1]]);
+    await host.settled();
+    expect(await read('B1')).toEqual([[{ error: '#VALUE!', message: 'rate must be above 0; got -1.' }]]);
+  });
+
+  it('reads what a formula fills beyond its own cell', async () => {
+    host = await open(planOf([[70, '=FOLD.FREQ(A1:A3,Rate)', 100], [80], [90]], { Rate: 'Plan!$C$1' }));
+    expect(await read('B1:B4')).toEqual([[30], [20], [10], [null]]);
+    await host.write('Rate', [[50]]);
+    await host.settled();
+    expect(await read('B1:B4')).toEqual([[20], [20], [10], [null]]);
+  });
+
+  it.each<[string, CellInput]>([
+    ['a formula', '=1+1'], ['a number with zeros before it', '007'], ['a date', '1-2'], ['a percentage', '5%'], ['a truth value', 'TRUE'], ['an error', '#N/A'],
+    ['a quoted text', "'quoted"], ['an external command', '@SUM(1)'],
+  ])('writes text that looks like %s as text', async (_what, text) => {
+    host = await open(planOf([[1, '=A1&"!"']]));
+    await host.write('A1', [[text]]);
+    await host.settled();
+    expect(await read('A1')).toEqual([[text]]);
+    expect(host.save().sheets[0]!.cells[0]![0]).toEqual({ value: text });
+  });
+
+  it('undoes a write in one step, whatever it wrote', async () => {
+    host = await open(planOf([[1, '=A1+1', 'text', true], ['=A1*10', 5, null, '']], {}));
+    const before = await read('A1:D2');
+    await host.write('A1:D2', [[2, { formula: '=A1*3' }, null, '=x'], [null, 'new', { formula: '=FOLD.FREQ(70,100)' }, false]]);
+    await host.settled();
+    expect(await read('A1:D2')).toEqual([[2, 6, null, '=x'], [null, 'new', 30, false]]);
+    await undo();
+    expect(await read('A1:D2')).toEqual(before);
+  });
+
+  it('grows where a write goes beyond the cells it has, and undoes that too', async () => {
+    host = await open(planOf([[1]]));
+    await host.write('ZZ30000', [['far']]);
+    expect(await read('ZZ30000')).toEqual([['far']]);
+    await undo();
+    expect(await read('ZZ30000')).toEqual([[null]]);
+  });
+
+  it('knows sheets and names in any case', async () => {
+    host = await open(planOf([[245.76]], { Rate: 'Plan!$A$1', Half: '=Plan!$A$1/2', Half_Rate: '122.88' }));
+    expect((await host.read('RATE'))?.values).toEqual([[245.76]]);
+    expect((await host.read('plan!a1'))?.sheet).toBe('Plan');
+    expect(await host.read('Half')).toBeNull();
+    expect(await host.read('Half_Rate')).toBeNull();
+  });
+
+  it('forgets the workbook before when another is loaded', async () => {
+    host = await open(planOf([['=FOLD.FREQ(70,Rate)', 100]], { Rate: 'Plan!$B$1' }));
+    await host.load(planOf([['=FOLD.FREQ(70,Rate)', null, 50]], { Rate: 'Plan!$C$1' }));
+    expect(await read('A1:C1')).toEqual([[20, null, 50]]);
+    let told = 0;
+    await host.onRecalculated(() => told++);
+    await host.write('Rate', [[60]]);
+    await host.settled();
+    expect(await read('A1')).toEqual([[10]]);
+    expect(told).toBe(1);
+  });
+
+  it('tells of edits, and not of recalculations', async () => {
+    host = await open(planOf([[1, '=A1+1']]));
+    let edits = 0;
+    const stop = host.onEdited(() => edits++);
+    await host.write('A1', [[2]]);
+    const written = edits;
+    await host.settled();
+    expect(written).toBeGreaterThan(0);
+    expect(edits).toBe(written);
+    stop();
+    await host.write('A1', [[3]]);
+    expect(edits).toBe(written);
+  });
+});
+
+describe('a workbook loaded into the embedded sheet and saved from it', () => {
+  const saved = async (workbook: Workbook) => {
+    const host = await open(workbook);
+    const result = host.save();
+    host.dispose();
+    return result;
+  };
+
+  it('is the same: values, formulas, styles, sizes, merges, frozen panes, names', async () => {
+    const border = { style: 'thin', color: '#41616f' } as const;
+    const workbook = planOf([
+      [{ value: 'Title', style: { bold: true, italic: true, underline: true, strike: true, fontName: 'Georgia', fontSize: 14, color: '#102030', fill: '#dfe9ee' } }],
+      [{ value: 1.5, style: { numberFormat: '#,##0.000', horizontal: 'right', vertical: 'middle', wrap: true } }, '=FOLD.FREQ(70,Rate)', 100],
+      [
+        { value: null, style: { border: { top: border, bottom: { style: 'double', color: '#000000' } } } }, '007', true, { value: { error: '#N/A' } },
+        { value: 0.5, style: { numberFormat: '0%', border: { left: { style: 'dashed', color: '#ff0000' }, right: { style: 'thick', color: '#00ff00' } } } },
+      ],
+    ], { Rate: 'Plan!$C$2', Fold_Low: 'Plan!$A$2:$A$9' });
+    Object.assign(workbook.sheets[0]!, {
+      columns: { 0: { width: 120 }, 3: { width: 64, hidden: true }, 5: { hidden: true } }, rows: { 0: { height: 31 }, 7: { hidden: true } }, merges: ['A1:C1', 'A5:B6'],
+      frozen: { rows: 1, columns: 2 },
+    });
+    workbook.sheets[0]!.cells[1]![1]!.value = 30;
+    expect(await saved(workbook)).toEqual(workbook);
+  });
+
+  it('holds the values of what a formula fills, and takes them for no values of their own', async () => {
+    const filled = planOf([
+      [70, { value: 30, formula: '=FOLD.FREQ(A1:A2,100)', spill: { rows: 2, columns: 1 }, style: { bold: true } }],
+      [80, { value: 20, style: { numberFormat: '0.0' } }],
+    ]);
+    expect(await saved(filled)).toEqual(filled);
+  });
+
+  it('is the demo plan and what it computes', async () => {
+    const once = await saved(demoPlan());
+    expect(once.names).toEqual(demoPlan().names);
+    expect(await saved(once)).toEqual(once);
+    const errors = once.sheets.flatMap((sheet) => Object.values(sheet.cells).flatMap((line) => Object.values(line))).filter(({ value }) => typeof value === 'object' && value !== null);
+    expect(errors).toEqual([]);
+  });
 });
