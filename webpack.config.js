@@ -26,7 +26,7 @@ const { version } = JSON.parse(readFileSync(at('package.json'), 'utf8'));
 const VENDOR_OFFICE_JS = 'https://appsforoffice.microsoft.com/lib/1/hosted/office.js';
 
 /** Source files that hold worksheet functions, in the order of the function list. */
-const FAMILIES = ['landing', 'rates'].map((family) => at('src/functions', `${family}.ts`));
+const FAMILIES = ['landing', 'rates', 'spurs'].map((family) => at('src/functions', `${family}.ts`));
 
 /**
  * The part of the vendor's package that a self-hosted Office.js consists of. The rest is typings, debug builds, other hosts, and the
@@ -115,7 +115,7 @@ export default async (env) => {
       new webpack.DefinePlugin({ FOLDPLAN_VERSION: JSON.stringify(version) }),
       new CopyPlugin({
         patterns: [
-          { from: at('assets'), to: 'assets' },
+          { from: at('assets'), to: 'assets', globOptions: { ignore: ['**/readme/**'] } },
           { from: at('manifest/manifest.xml'), to: 'manifest.xml', transform: () => manifestFor(base, version) },
           ...(selfHosted
             ? OFFICE_FILES.map((from) => ({ from, to: 'office', context: path.dirname(require.resolve('@microsoft/office-js/dist/office.js')) }))
@@ -124,10 +124,17 @@ export default async (env) => {
       }),
     ],
     devServer: {
+      host: 'localhost', // plans are for this machine alone
       port: 3000,
       open: env.excel ? false : ['/workbench.html'],
       static: false,
-      client: { overlay: false },
+      // The pages as they are shipped: nothing of the server in them.
+      client: false,
+      hot: false,
+      liveReload: false,
+      onListening: ({ options }) => {
+        if (!env.excel) process.stdout.write(`\nThe workbench: http://localhost:${options.port}/workbench.html (stop it with Ctrl+C)\n\n`);
+      },
       ...(env.excel ? { server: { type: 'https', options: await certificate() }, headers: { 'access-control-allow-origin': '*' } } : {}),
     },
   };

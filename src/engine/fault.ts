@@ -18,6 +18,9 @@ export function shown(value: unknown): string {
   return `"${text.length > 40 ? `${text.slice(0, 39)}…` : text}"`;
 }
 
+/** An argument's name with the row of a plan that is meant, counted from 1. */
+export const inRow = (argument: string, row: number): string => `${argument} (row ${row + 1})`;
+
 const input = (sentence: string) => new Fault('input', sentence);
 const none = (sentence: string) => new Fault('none', sentence);
 const count = (n: bigint) => n.toString().replace(/\B(?=(\d{3})+$)/g, ' ');

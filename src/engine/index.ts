@@ -3,7 +3,7 @@
 export { type FrequencyRange, type Source, imagesOf, resolveFrequency } from './ambiguity';
 export { bandCheck, bandGap, bandInverted, bandMargin, bandZone, imageHigh, imageLow } from './band';
 export { type ClockRate, clockRates } from './clock-rates';
-export { Fault, faults } from './fault';
+export { Fault, faults, inRow } from './fault';
 export { type Sampling, foldedFrequency, frequencyZone, isInverted } from './folding';
 export { type Hold, type OutputImage, holdLevel, outputImages } from './hold';
 export { type BrokenRule, type Conflict, type PlanRange, type RankedRate, conflicts, headroom, planRates, rankRates } from './plan';

@@ -7,7 +7,7 @@ import { foldExactly } from './folding';
 import { type Rational, ZERO, absolute, add, compare, divide, fromNumber, half, rational, subtract, times, toNumber } from './rational';
 
 export interface Product {
-  /** Such as `2f1-f2`. */
+  /** Such as `2·f1-f2`. */
   product: string;
   /** Sum of the absolute multipliers. */
   order: number;
@@ -22,7 +22,7 @@ const MOST_PRODUCTS = 200_000n;
  * real sampling.
  * @param tones two or more
  * @throws Fault where an argument is out of range or more than 10 000 products would be listed
- * @example intermodulation([5, 6], 100, 2).map(({ product }) => product) // => ['f2-f1', '2f1', 'f1+f2', '2f2']
+ * @example intermodulation([5, 6], 100, 2).map(({ product }) => product) // => ['f2-f1', '2·f1', 'f1+f2', '2·f2']
  */
 export function intermodulation(tones: readonly number[], rate: number, order: number): Product[] {
   if (tones.length < 2) throw faults.tooFewTones(tones.length);
@@ -40,7 +40,7 @@ export function intermodulation(tones: readonly number[], rate: number, order: n
 
 /** Something that lands where a spur was seen. */
 export interface Suspect {
-  /** Such as `2f1-f2`, `f1 image 1/4` or `offset 1/4`. */
+  /** Such as `2·f1-f2`, `f1 image 1/4` or `offset 1/4`. */
   product: string;
   order: number;
   frequency: number;
@@ -57,7 +57,7 @@ export interface Suspect {
  * @param cores a whole number from 1 to 64
  * @param names of the tones; as many
  * @throws Fault where an argument is out of range, nothing lands there, or there are too many products
- * @example suspectsOf(6, 20, [7], 3, 0, 1, ['f1']) // => [{ product: '2f1', order: 2, frequency: 14, miss: 0 }]
+ * @example suspectsOf(6, 20, [7], 3, 0, 1, ['f1']) // => [{ product: '2·f1', order: 2, frequency: 14, miss: 0 }]
  */
 export function suspectsOf(
   observed: number, rate: number, tones: readonly number[], order: number, tolerance: number, cores: number, names: readonly string[],
@@ -136,10 +136,10 @@ function combinations(tones: readonly Rational[], order: number): Combination[] 
   return found;
 }
 
-/** `2f1-f2`: what is added first, so that a cell never takes it for a formula. */
+/** `2·f1-f2`: what is added first, so that a cell never takes it for a formula. */
 function inWords(multipliers: readonly number[], names: readonly string[]): string {
   const terms = multipliers.map((c, i) => ({ c, name: names[i]! })).filter(({ c }) => c !== 0);
-  const size = (c: number, name: string) => `${Math.abs(c) === 1 ? '' : Math.abs(c)}${name}`;
+  const size = (c: number, name: string) => (Math.abs(c) === 1 ? name : `${Math.abs(c)}·${name}`);
   const added = terms.filter(({ c }) => c > 0).map(({ c, name }) => size(c, name)).join('+');
   const taken = terms.filter(({ c }) => c < 0).map(({ c, name }) => `-${size(c, name)}`).join('');
   return `${added}${taken}`;

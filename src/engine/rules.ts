@@ -3,7 +3,7 @@
 
 import { folds, readBand, readGuard } from './band';
 import { checkCount } from './counts';
-import { faults } from './fault';
+import { faults, inRow } from './fault';
 import { type Sampling } from './folding';
 import { type Interval, centre, interval, mirror, multiple } from './interval';
 import { type Rational, add, negate, subtract } from './rational';
@@ -81,7 +81,7 @@ export function rulesOf(plan: Plan): Rule[] {
 function readBands({ low, high, role, sampling }: Plan): { row: number; band: Interval; role: Role }[] {
   if (high.length !== low.length) throw faults.countsDiffer('high', high.length, 'low', low.length);
   if (role.length !== low.length) throw faults.countsDiffer('role', role.length, 'low', low.length);
-  return low.map((edge, row) => ({ row, band: folds(readBand(edge, high[row]!), sampling), role: role[row]! })).filter((band) => band.role !== 'ignore');
+  return low.map((edge, row) => ({ row, band: folds(readBand(edge, high[row]!, inRow('low', row), inRow('high', row)), sampling), role: role[row]! })).filter((band) => band.role !== 'ignore');
 }
 
 const widen = ({ low, high }: Interval, guard: Rational): Interval => interval(subtract(low, guard), add(high, guard));

@@ -3,7 +3,7 @@
 // A host passes every argument as rows of cells, an argument left out as null. A blank cell is null, "" or, on some desktops, 0.
 // An error in a cell comes as an object with its code, and goes out again in the same row.
 
-import { Fault, type Sampling, faults } from '../engine';
+import { Fault, type Hold, type Role, type Sampling, faults, inRow } from '../engine';
 
 /** What a host passes for an argument. */
 export type Cells = any[][] | null | undefined;
@@ -72,6 +72,13 @@ function word<T extends string>(name: string, cells: Cells, accepted: readonly T
 }
 
 export const samplingKind = (cells: Cells): Argument<Sampling> => word('sampling', cells, ['real', 'iq']);
+
+export const holdKind = (cells: Cells): Argument<Hold> => word('hold', cells, ['nrz', 'rz', 'doublet']);
+
+/** How many of something, left out by a blank or by a 0, which would make no sense of its own. */
+export function count(name: string, cells: Cells, leftOut: number): Argument<number> {
+  return { name, cells: given(cells), read: (cell) => (isBlank(cell) || cell === 0 ? leftOut : readNumber(name, cell)) };
+}
 
 /** Whether a table gets its header row. */
 export function headerRow(cells: Cells): Argument<boolean> {
@@ -211,6 +218,9 @@ export function table(headers: Argument<boolean>, titles: string[], list: () => 
   });
 }
 
+/** A single result for a whole plan, or the error of it. */
+export const result = (compute: () => Result): any[][] => guarded(() => [[compute()]]);
+
 /** The value of an argument that is one cell. */
 export function single<T>(argument: Argument<T>): T {
   const { cells } = argument;
@@ -228,6 +238,37 @@ export function vector<T>(argument: Argument<T>): T[] {
 function value<T>(argument: Argument<T>, cell: unknown): T {
   passError(cell);
   return argument.read(cell);
+}
+
+/** The rows of a plan: blank ones are ignored, and a role may be one cell for all. Sentences name the row. */
+export function planRows(low: Cells, high: Cells, role: Cells): { low: number[]; high: number[]; role: Role[] } {
+  const [lows, highs, roles] = ([['low', low], ['high', high], ['role', role]] as const).map(([name, cells]) => columnOf(name, cells)) as [unknown[], unknown[], unknown[]];
+  if (highs.length !== lows.length) throw faults.countsDiffer('high', highs.length, 'low', lows.length);
+  if (roles.length !== lows.length && roles.length !== 1) throw faults.countsDiffer('role', roles.length, 'low', lows.length);
+  const plan: { low: number[]; high: number[]; role: Role[] } = { low: [], high: [], role: [] };
+  for (const [row, lowEdge] of lows.entries()) {
+    const highEdge = highs[row];
+    const blank = [lowEdge, highEdge].every((edge) => isBlank(edge) || edge === 0);
+    plan.low.push(blank ? 0 : single(number(inRow('low', row), [[lowEdge]])));
+    plan.high.push(blank ? 0 : single(number(inRow('high', row), [[highEdge]])));
+    plan.role.push(blank ? 'ignore' : single(word(inRow('role', row), [[roles[roles.length === 1 ? 0 : row]]], ['wanted', 'unwanted', 'ignore'])));
+  }
+  return plan;
+}
+
+/** The cells of an argument that is one column or one row. */
+const columnOf = (name: string, cells: Cells): unknown[] => asColumn({ name, cells: given(cells), read: (cell) => cell }).cells.map(([cell]) => cell);
+
+/** Names for the rows of another argument, as text; a row without one is called otherwise. */
+export function rowNames(name: string, cells: Cells, of: string, rows: number, otherwise: (row: number) => string): string[] {
+  if (!cells) return Array.from({ length: rows }, (_, row) => otherwise(row));
+  const names = columnOf(name, cells);
+  while (names.length > rows && isBlank(names.at(-1))) names.pop();
+  if (names.length !== rows) throw faults.countsDiffer(name, names.length, of, rows);
+  return names.map((cell, row) => {
+    passError(cell);
+    return isBlank(cell) ? otherwise(row) : String(cell);
+  });
 }
 
 function asColumn<T>(argument: Argument<T>): Argument<T> {
@@ -251,13 +292,17 @@ function passError(cell: unknown): void {
   if (typeof shown === 'string' && shown.startsWith('#')) throw new CellErrorPassed(shown);
 }
 
-/** Runs a whole function; a fault of the whole becomes the error of its first cell. */
+/** Runs a whole function; a fault of the whole is thrown, as is that of a single cell: it is the way that hosts document. */
 function guarded(run: () => any[][]): any[][] {
+  let cells: any[][];
   try {
-    return run();
+    cells = run();
   } catch (fault) {
     throw cellError(fault);
   }
+  const [[first]] = cells as [[unknown]];
+  if (cells.length === 1 && cells[0]!.length === 1 && first instanceof CustomFunctions.Error) throw first;
+  return cells;
 }
 
 /** The host's error for a fault. Hosts show a sentence only with #VALUE! and #N/A. */

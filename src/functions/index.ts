@@ -2,3 +2,4 @@
 
 export * from './landing';
 export * from './rates';
+export * from './spurs';

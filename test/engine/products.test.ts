@@ -13,15 +13,15 @@ describe('intermodulation', () => {
   it('names its products with what is added first, by order and frequency', () => {
     expect(intermodulation([5, 6], 16, 3)).toEqual([
       { product: 'f2-f1', order: 2, frequency: 1, folded: 1 },
-      { product: '2f1', order: 2, frequency: 10, folded: 6 },
+      { product: '2·f1', order: 2, frequency: 10, folded: 6 },
       { product: 'f1+f2', order: 2, frequency: 11, folded: 5 },
-      { product: '2f2', order: 2, frequency: 12, folded: 4 },
-      { product: '2f1-f2', order: 3, frequency: 4, folded: 4 },
-      { product: '2f2-f1', order: 3, frequency: 7, folded: 7 },
-      { product: '3f1', order: 3, frequency: 15, folded: 1 },
-      { product: '2f1+f2', order: 3, frequency: 16, folded: 0 },
-      { product: 'f1+2f2', order: 3, frequency: 17, folded: 1 },
-      { product: '3f2', order: 3, frequency: 18, folded: 2 },
+      { product: '2·f2', order: 2, frequency: 12, folded: 4 },
+      { product: '2·f1-f2', order: 3, frequency: 4, folded: 4 },
+      { product: '2·f2-f1', order: 3, frequency: 7, folded: 7 },
+      { product: '3·f1', order: 3, frequency: 15, folded: 1 },
+      { product: '2·f1+f2', order: 3, frequency: 16, folded: 0 },
+      { product: 'f1+2·f2', order: 3, frequency: 17, folded: 1 },
+      { product: '3·f2', order: 3, frequency: 18, folded: 2 },
     ]);
   });
 

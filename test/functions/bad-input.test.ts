@@ -20,6 +20,21 @@ const notWord = (name: string): [Given, string][] => [
   ['<img src=x onerror=alert(1)> and much more of it', `#VALUE! ${name} must be "real" or "iq"; got "<img src=x onerror=alert(1)> and much m…".`],
 ];
 
+const counts = (name: string, most: number | null, tooMany: [Given, string]): [Given, string][] => {
+  const accepted = `${name} must be a whole number${most === null ? ', 1 or more' : ` from 1 to ${most}`}`;
+  return [...notNumbers(name), [2.5, `#VALUE! ${accepted}; got 2.5.`], [-1, `#VALUE! ${accepted}; got -1.`], tooMany];
+};
+/** Columns of a plan. */
+const planLows: [Given, string][] = [
+  [[10, 'x'], '#VALUE! low (row 2) must be a number; got "x".'], [[10, { code: '#N/A' }], '#N/A'], [[10, 63], '#VALUE! low (row 2) must not be above high (row 2); got 63 and 62.'],
+  [[10, ''], '#VALUE! low (row 2) must be a number; got a blank cell.'], [[10, 60, 70], '#VALUE! high must have as many cells as low, 3; got 2.'],
+];
+const planHighs: [Given, string][] = [
+  [[12, 'x'], '#VALUE! high (row 2) must be a number; got "x".'], [[12, Infinity], '#VALUE! high (row 2) must be a number; got Infinity.'], [[12, 59], '#VALUE! low (row 2) must not be above high (row 2); got 60 and 59.'],
+  [[12], '#VALUE! high must have as many cells as low, 2; got 1.'],
+];
+const PLAN_FUNCTIONS = ['PLANRATES', 'RANKRATES', 'CONFLICTS', 'HEADROOM'];
+
 /** By the name of the parameter; where functions differ, by function and name. */
 const BAD: Record<string, [Given, string][]> = {
   frequency: notNumbers('frequency'),
@@ -45,13 +60,55 @@ const BAD: Record<string, [Given, string][]> = {
   'RATES high': [...notNumbers('high'), blank('high'), [17, '#VALUE! low must not be above high; got 17.5 and 17.']],
   'MINRATE low': [...notNumbers('low'), blank('low'), [23, '#VALUE! low must not be above high; got 23 and 22.5.']],
   'MINRATE high': [...notNumbers('high'), blank('high'), [17, '#VALUE! low must not be above high; got 17.5 and 17.']],
-  observed: [...notNumbers('observed'), [[14, 10], '#VALUE! rates must have as many cells as observed, 2; got 3.'], [[14, 'x', 4], '#VALUE! observed must be a number; got "x".'],
+  'RESOLVE observed': [...notNumbers('observed'), [[14, 10], '#VALUE! rates must have as many cells as observed, 2; got 3.'], [[14, 'x', 4], '#VALUE! observed must be a number; got "x".'],
     [[29, 10, 4], '#VALUE! observed must be from 0 to 28, where this rate puts frequencies; got 29.']],
   rates: [...notNumbers('rates'), [[56, 40], '#VALUE! rates must have as many cells as observed, 3; got 2.'], [[56, 0, 33], '#VALUE! rates must be above 0; got 0.']],
   tolerance: [...notNumbers('tolerance'), [-1, '#VALUE! tolerance must be 0 or more; got -1.']],
+  'HARMONICS low': [...notNumbers('low'), [13, '#VALUE! low must not be above high; got 13 and 12.']],
+  'HARMONICS high': [...notNumbers('high'), [9, '#VALUE! low must not be above high; got 10 and 9.']],
+  'INTERLEAVING low': [...notNumbers('low'), [13, '#VALUE! low must not be above high; got 13 and 12.']],
+  'INTERLEAVING high': [...notNumbers('high'), [9, '#VALUE! low must not be above high; got 10 and 9.']],
+  'MIXING low': [...notNumbers('low'), [13, '#VALUE! low must not be above high; got 13 and 12.']],
+  'MIXING high': [...notNumbers('high'), [9, '#VALUE! low must not be above high; got 10 and 9.']],
+  'DACIMAGES low': [...notNumbers('low'), [-1, '#VALUE! low must be from 0 to 50, half the rate; got -1.']],
+  'DACIMAGES high': [...notNumbers('high'), [51, '#VALUE! high must be from 0 to 50, half the rate; got 51.']],
+  'SOURCES observed': [...notNumbers('observed'), [11, '#VALUE! observed must be from 0 to 10, where this rate puts frequencies; got 11.'],
+    [0.2, '#N/A No product up to order 3 lands on 0.2 within the tolerance; the nearest, 2·clock-carrier, misses by 0.8.']],
+  'SOURCES order': counts('order', null, [1e3, '#VALUE! The tones have 1 001 006 products up to this order and at most 200 000 are tried; lower order or give fewer tones.']),
+  'PLANRATES from': [...notNumbers('from'), [-1, '#VALUE! from must be 0 or more; got -1.'], [205, '#VALUE! from must not be above to; got 205 and 200.']],
+  'PLANRATES to': [...notNumbers('to'), [-1, '#VALUE! to must be above 0; got -1.'], [101, '#N/A No rate from 100 to 101 keeps every wanted band clear.']],
+  'RANKRATES from': [...notNumbers('from'), [-1, '#VALUE! from must be 0 or more; got -1.'], [95, '#VALUE! from must not be above to; got 95 and 90.']],
+  'RANKRATES to': [...notNumbers('to'), [31, '#N/A No rate of the grid keeps every wanted band clear.']],
+  'CLOCKRATES from': [...notNumbers('from'), [-1, '#VALUE! from must be 0 or more; got -1.'], [71, '#VALUE! from must not be above to; got 71 and 70.']],
+  'CLOCKRATES to': [...notNumbers('to'), [59, '#VALUE! from must not be above to; got 60 and 59.']],
+  cores: counts('cores', 64, [65, '#VALUE! cores must be a whole number from 1 to 64; got 65.']),
+  harmonics: counts('harmonics', 20, [21, '#VALUE! harmonics must be a whole number from 1 to 20; got 21.']),
+  count: counts('count', 10000, [20_000, '#VALUE! count must be a whole number from 1 to 10000; got 20000.']),
+  multiply: counts('multiply', 10000, [20_000, '#VALUE! multiply must be a whole number from 1 to 10000; got 20000.']),
+  divide: counts('divide', 10000, [20_000, '#VALUE! divide must be a whole number from 1 to 10000; got 20000.']),
+  highest: counts('highest', null, [20_000, '#VALUE! The result would have 20 000 rows and at most 10 000 are listed; lower highest.']),
+  zones: counts('zones', null, [20_000, '#VALUE! The result would have 20 000 rows and at most 10 000 are listed; lower zones.']),
+  m: counts('m', null, [9_000, '#VALUE! The result would have 27 001 rows and at most 10 000 are listed; lower m or n.']),
+  n: counts('n', null, [9_000, '#VALUE! The result would have 27 001 rows and at most 10 000 are listed; lower m or n.']),
+  order: counts('order', null, [200, '#VALUE! The result would have 40 198 rows and at most 10 000 are listed; lower order or give fewer tones.']),
+  oscillator: [...notNumbers('oscillator'), [0, '#VALUE! oscillator must be above 0; got 0.']],
+  reference: [...notNumbers('reference'), [0, '#VALUE! reference must be above 0; got 0.']],
+  frequencies: [...notNumbers('frequencies').filter(([value]) => typeof value !== 'object'), [[5], '#VALUE! frequencies must hold at least two tones; got 1.'], [[5, 'x'], '#VALUE! frequencies must be a number; got "x".']],
+  tones: [...notNumbers('tones'), [[7, ''], '#VALUE! name must have as many cells as tones, 1; got 2.'], [[7, 'x'], '#VALUE! tones must be a number; got "x".']],
+  grid: [...notNumbers('grid'), [0, '#VALUE! grid must hold rates or one step, each above 0; got 0.'], [[60, 0], '#VALUE! grid must hold rates or one step, each above 0; got 0.'],
+    [[60, 'x'], '#VALUE! grid must be a number; got "x".'], [[24, 48], '#N/A No rate of the grid keeps every wanted band clear.']],
+  role: [[['wanted', 'Jammer'], '#VALUE! role (row 2) must be "wanted" or "unwanted" or "ignore"; got "Jammer".'], [['ignore', 'unwanted'], '#VALUE! role must be "wanted" or blank in at least one row; got no such row.'],
+    [['wanted', 'unwanted', 'unwanted'], '#VALUE! role must have as many cells as low, 2; got 3.'], [['wanted', { code: '#REF!' }], '#REF!']],
+  'CONFLICTS name': [[['a', 'b', 'c'], '#VALUE! name must have as many cells as low, 2; got 3.'], [['a', { code: '#REF!' }], '#REF!']],
+  'SOURCES name': [[['a', 'b', 'c'], '#VALUE! name must have as many cells as tones, 2; got 3.'], [['a', { code: '#REF!' }], '#REF!']],
+  hold: [['square', '#VALUE! hold must be "nrz" or "rz" or "doublet"; got "square".']],
 };
 
-const badFor = (id: string, parameter: string) => BAD[`${id} ${parameter}`] ?? BAD[parameter];
+const badFor = (id: string, parameter: string): [Given, string][] | undefined => {
+  if (PLAN_FUNCTIONS.includes(id) && parameter === 'low') return planLows;
+  if (PLAN_FUNCTIONS.includes(id) && parameter === 'high') return planHighs;
+  return BAD[`${id} ${parameter}`] ?? BAD[parameter];
+};
 
 describe.each(built.metadata)('FOLD.$id', ({ id, parameters }) => {
   const full = FULL_CALLS[id]!;
@@ -73,7 +130,7 @@ describe.each(built.metadata)('FOLD.$id', ({ id, parameters }) => {
 
     it('is one cell, or the size of the others', () => {
       const [first] = call(id, ...full.with(index, [[1, 2, 3], [4, 5, 6]]).with(index === 0 ? 1 : 0, [1, 2, 3]));
-      expect(String(first![0])).toMatch(/^#VALUE! \w+ must be (one cell or the size of \w+, \d × \d cells|a single cell|one column or one row of cells); got \d × \d cells\.$/);
+      expect(String(first![0])).toMatch(/^#VALUE! \w+ must (be one cell or the size of \w+, \d × \d cells; got \d × \d cells|be (a single cell|one column or one row of cells); got \d × \d cells|have as many cells as \w+, \d; got \d)\.$/);
     });
 
     if (optional) {
