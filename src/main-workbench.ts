@@ -2,12 +2,47 @@
 
 import './workbench/workbench.css';
 import { demoPlan, demoPlanName } from './demo-plan';
+import { HostFault, type Workbook } from './host/port';
 import { openEmbedded } from './host/sheet/embedded';
 import { type FunctionsMetadata, type WorksheetFunctions, createRuntime } from './host/sheet/functions-runtime';
+import { unknownParts } from './host/sheet/known-functions';
+import type { SheetHost } from './host/sheet/sheet-host';
+import { cellsOf } from './host/sheet/workbook-data';
 import { mountPane } from './pane';
-import { workbenchPage } from './workbench/page';
+import { type Page, workbenchPage } from './workbench/page';
+import { sentences } from './workbench/sentences';
 
-const page = workbenchPage(document, { open: () => {}, save: () => {}, unsaved: () => false });
+const XLSX = 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet';
+
+/** The file that the sheet shows. */
+const current = { name: demoPlanName, unsaved: false };
+
+void start();
+
+async function start(): Promise<void> {
+  let host: SheetHost | null = null;
+  const page = workbenchPage(document, {
+    open: (file) => host && void open(page, host, file),
+    save: () => host && void save(page, host),
+    unsaved: () => current.unsaved,
+  });
+  page.busy(true);
+  try {
+    const dark = matchMedia('(prefers-color-scheme: dark)');
+    const sheet = openEmbedded(await loadWorksheetFunctions(), page.sheet, dark.matches);
+    dark.addEventListener('change', ({ matches }) => sheet.setDark(matches));
+    await sheet.host.load(demoPlan());
+    host = sheet.host;
+    host.onEdited(() => nameCurrent(page, current.name, true));
+    followSelection(page, host);
+    nameCurrent(page, demoPlanName, false);
+    page.tell(sentences.welcome);
+    page.busy(false);
+    await mountPane(host, page.pane);
+  } catch {
+    page.complain(sentences.cannotStart);
+  }
+}
 
 /** The contract of every host, loaded as a page loads it. */
 async function loadWorksheetFunctions(): Promise<WorksheetFunctions> {
@@ -26,13 +61,68 @@ async function loadWorksheetFunctions(): Promise<WorksheetFunctions> {
   return runtime.functions(metadata);
 }
 
-async function start(): Promise<void> {
-  const darkQuery = matchMedia('(prefers-color-scheme: dark)');
-  const { host, setDark } = openEmbedded(await loadWorksheetFunctions(), page.sheet, darkQuery.matches);
-  darkQuery.addEventListener('change', ({ matches }) => setDark(matches));
-  await host.load(demoPlan());
-  page.nameFile(demoPlanName, false);
-  await mountPane(host, page.pane);
+/** What stood in the sheet stays there unless the file could be read. */
+async function open(page: Page, host: SheetHost, file: File): Promise<void> {
+  if (current.unsaved && !(await page.mayDiscard(sentences.mayDiscard(current.name, file.name)))) return;
+  page.busy(true);
+  page.tell(sentences.opening(file.name));
+  try {
+    const { readWorkbook } = await import('./host/file');
+    const { workbook, notKept } = await readWorkbook(new Uint8Array(await file.arrayBuffer()));
+    await host.load(workbook, (done, total) => page.tell(sentences.computing(file.name, done, total)));
+    nameCurrent(page, file.name, false);
+    page.tell(whatWasOpened(file.name, workbook, notKept));
+  } catch (error) {
+    page.complain(error instanceof HostFault ? `${file.name}: ${error.message}` : sentences.cannotOpen(file.name));
+  } finally {
+    page.busy(false);
+  }
 }
 
-void start();
+function whatWasOpened(name: string, workbook: Workbook, notKept: string[]): string {
+  const formulas = workbook.sheets.flatMap((sheet) => [...cellsOf(sheet)]).flatMap(([, , { formula }]) => (formula === undefined ? [] : [formula]));
+  const unknown = formulas.map(unknownParts).filter((parts) => parts.length > 0);
+  return [
+    sentences.opened(name, workbook.sheets.length, formulas.length),
+    ...(notKept.length > 0 ? [sentences.notKept(notKept)] : []),
+    ...(unknown.length > 0 ? [sentences.unknownParts(unknown.length, [...new Set(unknown.flat())])] : []),
+  ].join(' ');
+}
+
+async function save(page: Page, host: SheetHost): Promise<void> {
+  const name = current.name.replace(/(\.xlsx)?$/i, '.xlsx');
+  page.busy(true);
+  page.tell(sentences.saving(name));
+  try {
+    const { writeWorkbook } = await import('./host/file');
+    await host.settled();
+    const bytes = await writeWorkbook(host.save());
+    page.download(name, new Blob([bytes as Uint8Array<ArrayBuffer>], { type: XLSX }));
+    nameCurrent(page, name, false);
+    page.tell(sentences.saved(name));
+  } catch (error) {
+    page.complain(error instanceof HostFault ? error.message : sentences.cannotSave(name));
+  } finally {
+    page.busy(false);
+  }
+}
+
+function nameCurrent(page: Page, name: string, unsaved: boolean): void {
+  if (current.name !== name || current.unsaved !== unsaved) Object.assign(current, { name, unsaved });
+  page.nameFile(name, unsaved);
+}
+
+/** Tells about the selected cell, and the sentence behind its error. */
+function followSelection(page: Page, host: SheetHost): void {
+  let asked = 0;
+  const show = async () => {
+    const turn = ++asked;
+    const cell = await host.selectedCell();
+    if (turn !== asked || !cell) return;
+    const value = cell.values[0]![0]!;
+    const failed = typeof value === 'object' && value !== null;
+    page.showCell(failed ? '' : sentences.cell(cell.address, value), failed ? sentences.cellError(cell.address, value.error, value.message) : null);
+  };
+  host.onSelected(() => void show());
+  void host.onRecalculated(() => void show());
+}

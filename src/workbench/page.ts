@@ -9,8 +9,8 @@ export interface Page {
   tell(sentence: string): void;
   /** Says what went wrong. */
   complain(sentence: string): void;
-  /** The sentence behind the error in the selected cell, or null where there is none. */
-  explainCell(sentence: string | null): void;
+  /** The selected cell: what screen readers say of it, and for everyone the sentence behind its error, where it has one. */
+  showCell(spoken: string, error: string | null): void;
   /** While something takes its time, neither Open nor Save can be pressed. */
   busy(on: boolean): void;
   /** Asks before changes are lost; resolves to whether they may be. */
@@ -53,8 +53,9 @@ export function workbenchPage(document: Document, actions: Actions): Page {
     },
     tell: (sentence) => say('news', sentence),
     complain: (sentence) => say('fault', sentence),
-    explainCell(sentence) {
-      if (cellError.textContent !== (sentence ?? '')) cellError.textContent = sentence ?? '';
+    showCell(spoken, error) {
+      renew(byId('cell'), spoken);
+      renew(cellError, error ?? '');
     },
     busy(on) {
       openButton.disabled = on;
@@ -75,6 +76,11 @@ export function workbenchPage(document: Document, actions: Actions): Page {
       setTimeout(() => URL.revokeObjectURL(link.href), 60_000);
     },
   };
+}
+
+/** The same text again would be said again. */
+function renew(element: HTMLElement, text: string): void {
+  if (element.textContent !== text) element.textContent = text;
 }
 
 /** A file comes from the dialog behind the button, or is dropped anywhere on the page. */

@@ -8,7 +8,9 @@ import '@univerjs/preset-sheets-core/lib/index.css';
 import { CalculationMode } from '@univerjs/sheets-formula';
 import { defaultTheme } from '@univerjs/themes';
 import { FormulaLexer } from './formula-lexer';
+import { suggestNames } from './formula-suggestions';
 import type { WorksheetFunctions } from './functions-runtime';
+import { nameControls } from './labels';
 import { SheetHost } from './sheet-host';
 import { type Listener, univerFunctions } from './univer-functions';
 
@@ -33,6 +35,8 @@ export function openEmbedded(functions: WorksheetFunctions, container: HTMLEleme
     else univer.registerPlugin(plugin);
   }
   univer.__getInjector().replace([LexerTreeBuilder, { useClass: FormulaLexer }]);
+  void suggestNames(univer);
+  nameControls(container);
   const theme = univer.__getInjector().get(ThemeService);
   return { host: new SheetHost(univer, listener), setDark: (on) => theme.setDarkMode(on) };
 }
