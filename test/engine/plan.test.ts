@@ -67,6 +67,26 @@ describe('usable rates of a whole plan', () => {
     expect(points).toBeGreaterThan(10);
   });
 
+  it('also where thousands of ranges are left, which are carved another way: 12 dense plans (seed 105)', () => {
+    const random = seeded(105);
+    for (let i = 0; i < 12; i++) {
+      const low = Array.from({ length: random.whole(3, 8) }, (_, k) => 100 + 10 * k + random.whole(0, 5000) / 1000);
+      const plan: Plan = {
+        low, high: low.map((edge) => Number((edge + 0.02).toFixed(3))), role: low.map((_, k) => (k % 2 ? 'unwanted' : 'wanted')), guard: 0,
+        harmonics: random.whole(1, 5), cores: random.pick([1, 3, 4]), sampling: random.pick(['real', 'iq'] as const),
+      };
+      const ppm = random.pick([0, 5]);
+      const found = ranges(plan, 15, 600, ppm);
+      expect(found.length).toBeGreaterThan(500);
+      const samples = [
+        ...Array.from({ length: 300 }, () => Number((15 + 585 * random.unit() ** 2).toPrecision(random.whole(3, 9)))),
+        ...Array.from({ length: 100 }, () => random.pick(found)).flatMap(({ lowest, highest }) => [lowest, highest!, beside(lowest, -1n), beside(highest!, 1n)]).filter((rate) => rate >= 15 && rate <= 600),
+      ];
+      const wrong = samples.filter((rate) => modelClear(plan, rate, ppm) !== found.some(({ lowest, highest }) => lowest <= rate && rate <= highest!));
+      expect({ plan, ppm, wrong }).toEqual({ plan, ppm, wrong: [] });
+    }
+  });
+
   it('leave conflicts nothing to report, and everywhere else it has something: 600 random plans (seed 102)', () => {
     const random = seeded(102);
     let clear = 0;
@@ -122,6 +142,7 @@ describe('ranked rates', () => {
       } catch (fault) {
         expect((fault as Fault).kind).toBe('none');
       }
+      expect(best.every(({ rate }) => conflicts(plan, rate, ppm).length === 0)).toBe(true);
       expect([plan, best.map((one) => [one.rate, one.headroom])]).toEqual([plan, all.slice(0, 5).map((one) => [one.rate, one.headroom])]);
       ranked += best.length;
     }
