@@ -125,7 +125,7 @@ export default async (env) => {
     ],
     devServer: {
       host: 'localhost', // plans are for this machine alone
-      port: 3000,
+      port: env.excel ? 3000 : 'auto', // from 3000 on, the first that is free
       open: env.excel ? false : ['/workbench.html'],
       static: false,
       // The pages as they are shipped: nothing of the server in them.
@@ -153,5 +153,9 @@ export default async (env) => {
   });
 
   if (env.bench) return [functions, program('bench', 'test/bench/run.ts')];
-  return env.WEBPACK_SERVE ? [site, functions] : [functions, site, program('recalc', 'src/main-recalc.ts')];
+  if (env.WEBPACK_SERVE) {
+    process.env.WEBPACK_DEV_SERVER_BASE_PORT ??= '3000';
+    return [site, functions].map((config) => ({ ...config, stats: 'errors-warnings', infrastructureLogging: { level: 'error' } }));
+  }
+  return [functions, site, program('recalc', 'src/main-recalc.ts')];
 };
