@@ -63,9 +63,8 @@ export class SheetHost implements Host {
    */
   async load(workbook: Workbook, onProgress: (done: number, total: number) => void = () => {}): Promise<void> {
     const data = toWorkbookData(workbook, generateRandomId());
-    const before = this.workbook;
+    if (this.workbook) this.get(IUniverInstanceService).disposeUnit(this.workbook.getUnitId());
     this.workbook = this.univer.createUnit<object, UniverWorkbook>(UniverInstanceType.UNIVER_SHEET, data);
-    if (before) this.get(IUniverInstanceService).disposeUnit(before.getUnitId());
     this.blocks ??= new BlockFollower(this.session, this.get(FormulaDataModel), this.get(ICommandService));
     const progress = this.session.state$.subscribe(({ progress }) => {
       if (progress?.stage !== FormulaExecuteStageType.CURRENTLY_CALCULATING) return;
