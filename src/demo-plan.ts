@@ -32,7 +32,7 @@ const SIGNALS: [name: string, low: number, high: number, role: 'wanted' | 'unwan
   ['Ship identification, AIS 2', 162.0125, 162.0375, 'wanted'],
   ['DAB, band III', 174, 240, 'unwanted'],
   ['Distress beacons', 406, 406.1, 'wanted'],
-  ['E-UTRA band 20 downlink', 791, 821, 'unwanted'],
+  ['E-UTRA band 20', 791, 821, 'unwanted'],
   ['ISM 915', 902, 928, 'unwanted'],
   ['ADS-B', 1089, 1091, 'wanted'],
   ['GPS L2C', 1226.577, 1228.623, 'wanted'],
@@ -65,7 +65,7 @@ function planSheet(): Sheet {
       formula(`=FOLD.MARGIN(${band},Guard,Ppm)`, FREQUENCY), formula(`=FOLD.CHECK(${band},Guard,Ppm)`),
     ];
   });
-  return sheet('Plan', lines, [176, 84, 84, 76, 88, 88, 48, 70, 76, 104], { rows: FIRST - 1, columns: 0 });
+  return sheet('Plan', lines, [176, 84, 84, 76, 92, 92, 48, 72, 76, 104], { rows: FIRST - 1, columns: 0 });
 }
 
 function ratesSheet(): Sheet {
@@ -74,9 +74,9 @@ function ratesSheet(): Sheet {
   lines[1] = [styled('Rates that hold the airband in one zone', TITLE), ...blanks(5), styled('What lands on one frequency', TITLE)];
   lines[2] = ['From', styled(60, INPUT), 'MHz', ...blanks(3), 'Seen at', styled(3.55, INPUT), 'MHz'];
   lines[3] = ['To', styled(300, INPUT), 'MHz', ...blanks(3), 'Up to', styled(1000, INPUT), 'MHz'];
-  lines[5] = [formula(`=FOLD.RATES(${airband},B2,B3,Guard,Ppm)`, HEADER), ...blanks(5), formula('=FOLD.IMAGES(H2,Rate,0,H3)', HEADER)];
+  lines[5] = [formula(`=FOLD.RATES(${airband},B2,B3,Guard,Ppm)`, NUMBER_HEADER), ...blanks(5), formula('=FOLD.IMAGES(H2,Rate,0,H3)', NUMBER_HEADER)];
   const listed = sheet('Rates and images', lines, [92, 100, 100, 84, 72, 40, 92, 84, 72], { rows: 5, columns: 0 });
-  for (const [first, count] of [[1, 4], [7, 2]] as const) for (let c = first; c < first + count; c++) put(listed, 4, c, { value: null, style: HEADER });
+  for (const [first, count] of [[1, 4], [7, 2]] as const) for (let c = first; c < first + count; c++) put(listed, 4, c, { value: null, style: NUMBER_HEADER });
   for (let r = 5; r < 30; r++) for (const c of [1, 2, 3, 6]) put(listed, r, c, { value: null, style: FREQUENCY });
   return listed;
 }

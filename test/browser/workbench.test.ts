@@ -219,7 +219,13 @@ describe('files in the workbench', () => {
     await expectText('#file-name', /^next\.xlsx$/);
   });
 
-  it('counts as saved what has been saved', async () => {
+  it('counts as changed what is changed, not what is looked at, and as saved what is saved', async () => {
+    await page.getByRole('tab', { name: 'Rates and images' }).click();
+    await goTo('A6');
+    await page.keyboard.press('F2');
+    await page.keyboard.press('Escape');
+    await page.getByRole('tab', { name: 'Plan' }).click();
+    expect(await page.locator('#file-name').textContent()).toBe('Gannet Ness.xlsx');
     await enter('B4', '0.5');
     await expectText('#file-name', 'changed');
     await saved();

@@ -86,8 +86,9 @@ export class SheetHost implements Host {
 
   /** Calls `listener` after every change that a user or a write makes, until the returned function is called. */
   onEdited(listener: () => void): () => void {
-    const subscription = this.get(ICommandService).onMutationExecutedForCollab((_mutation, options) => {
-      if (!options?.onlyLocal) listener(); // results of formulas stay local
+    const subscription = this.get(ICommandService).onMutationExecutedForCollab(({ params }, options) => {
+      const ofWorkbook = (params as { unitId?: string } | undefined)?.unitId === this.open.getUnitId(); // not of the text in the cell editor
+      if (ofWorkbook && !options?.onlyLocal) listener(); // results of formulas stay local
     });
     return () => subscription.dispose();
   }
