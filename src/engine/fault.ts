@@ -63,6 +63,18 @@ export const faults = {
     input(`multiply and divide leave ${count(pairs)} ratios and at most 1 000 000 are tried; lower them or bring from and to closer together.`),
   outsideFirstZone: (argument: string, value: number, highest: number) =>
     input(`${argument} must be from 0 to ${shown(highest)}, half the rate; got ${shown(value)}.`),
+  below: (argument: string, value: number, least: number) => input(`${argument} must be ${least} or more; got ${shown(value)}.`),
+  missingWith: (argument: string, other: string) => input(`${argument} must be given with ${other}; got a blank cell.`),
+  aboveHalf: (argument: string, value: number, rate: number) => input(`${argument} must be at most half the rate, ${shown(rate / 2)}; got ${shown(value)}.`),
+  notFraction: (argument: string, value: number) => input(`${argument} must be above 0 and at most 1; got ${shown(value)}.`),
+  noEdges: () => input('passHigh must be given for a low-pass, passLow for a high-pass, both for a band-pass; got two blank cells.'),
+  edgesDiffer: (pass: string, stop: string) => input(`${pass} and ${stop} must both be given or both be blank.`),
+  stopInside: (stop: string, value: number, where: string, pass: number) => input(`${stop} must be ${where}, ${shown(pass)}; got ${shown(value)}.`),
+  attenuationBelowRipple: (attenuation: number, ripple: number) => input(`attenuation must be above ripple, ${shown(ripple)} dB; got ${shown(attenuation)}.`),
+  noAttenuation: (response: string) => input(`attenuation must be given for the response "${response}"; got a blank cell.`),
+  noOneImage: (low: number, high: number, rate: number) =>
+    none(`The band from ${shown(low)} to ${shown(high)} crosses a zone edge of the rate ${shown(rate)}, so it has no one image to convert.`),
+  infiniteAttenuation: (frequency: number) => none(`The filter lets nothing through at ${shown(frequency)}.`),
   noLimit: () => input('to must be given where grid is a step; got a blank cell.'),
   badGrid: (value: unknown) => input(`grid must hold rates or one step, each above 0; got ${shown(value)}.`),
 

@@ -2,10 +2,14 @@
 
 export { type FrequencyRange, type Source, imagesOf, resolveFrequency } from './ambiguity';
 export { bandCheck, bandGap, bandInverted, bandMargin, bandZone, imageHigh, imageLow } from './band';
+export { type ChainStage, downConvert, tunedFrequency, tuningWord } from './chain';
 export { type ClockRate, clockRates } from './clock-rates';
+export { coherentCycles, coherentFrequency } from './coherent';
 export { Fault, faults, inRow } from './fault';
+export { type Edges, type Response, filterAttenuation, filterOrder } from './filter';
 export { type Sampling, foldedFrequency, frequencyZone, isInverted } from './folding';
 export { type Hold, type OutputImage, holdLevel, outputImages } from './hold';
+export { effectiveBits, foldedNoise, jitterLimit, jitterSnr, quantizationSnr, sumSnr } from './noise';
 export { type BrokenRule, type Conflict, type PlanRange, type RankedRate, conflicts, headroom, planRates, rankRates } from './plan';
 export { type Product, type Suspect, intermodulation, suspectsOf } from './products';
 export { type Plan, type Role } from './rules';
