@@ -1,4 +1,5 @@
-import { ICommandService, IUniverInstanceService, UndoCommand, UniverInstanceType } from '@univerjs/core';
+import { type Workbook as UniverWorkbook, Direction, ICommandService, IUniverInstanceService, UndoCommand, UniverInstanceType } from '@univerjs/core';
+import { InsertDefinedNameCommand, InsertRowCommand, RemoveDefinedNameCommand, RemoveRowCommand, SetDefinedNameCommand, SetWorksheetNameCommand } from '@univerjs/sheets';
 import { afterEach, describe, expect, it } from 'vitest';
 import { openHeadless } from '../../../src/host/sheet/headless';
 import type { SheetHost } from '../../../src/host/sheet/sheet-host';
@@ -122,6 +123,55 @@ describe('the embedded sheet', () => {
     stop();
     await host.write('A1', [[3]]);
     expect(edits).toBe(written);
+  });
+});
+
+describe('names in the embedded sheet', () => {
+  let host: SheetHost;
+  afterEach(() => host.dispose());
+
+  /** What a user does to the first sheet. */
+  const run = async (command: { id: string }, params: object = {}) => {
+    const injector = host.univer.__getInjector();
+    const workbook = injector.get(IUniverInstanceService).getCurrentUnitOfType<UniverWorkbook>(UniverInstanceType.UNIVER_SHEET)!;
+    await injector.get(ICommandService).executeCommand(command.id, { unitId: workbook.getUnitId(), subUnitId: workbook.getSheets()[0]!.getSheetId(), ...params });
+    await host.settled();
+  };
+  const rows = (first: number, last = first) => ({ startRow: first, endRow: last, startColumn: 0, endColumn: 35 });
+  const workbook = () => planOf([['rate', 100], [70, '=FOLD.FREQ(A2,Rate)', '=FOLD.FREQ(A2:A3,rate)'], [80, '=FOLD.FREQ(A3,Rate)']], { Rate: 'Plan!$B$1' });
+  const results = async (reference: string) => (await host.read(reference))?.values;
+
+  it('move with the cells that they name, and formulas follow', async () => {
+    host = await open(workbook());
+    await run(InsertRowCommand, { range: rows(0), direction: Direction.UP });
+    expect(await results('B3:C4')).toEqual([[30, 30], [20, 20]]);
+    expect((await host.read('Rate'))?.address).toBe('B2');
+    await run(SetWorksheetNameCommand, { name: "Gannet's plan" });
+    expect((await host.read('Rate'))?.sheet).toBe("Gannet's plan");
+    await host.write('Rate', [[50]]);
+    await host.settled();
+    expect(await results('B3:C4')).toEqual([[20, 20], [20, 20]]);
+    expect(host.save().names).toEqual({ Rate: "'Gannet''s plan'!$B$2" });
+    expect(host.save().sheets[0]!.cells[2]![1]!.formula).toBe('=FOLD.FREQ(A3,Rate)');
+  });
+
+  it('make an error of formulas when their cells are gone', async () => {
+    host = await open(workbook());
+    await run(RemoveRowCommand, { range: rows(0) });
+    expect(await results('B1:C1')).toEqual([[{ error: '#REF!' }, { error: '#REF!' }]]);
+    expect(await host.read('Rate')).toBeNull();
+  });
+
+  it('may be given, pointed elsewhere and taken away while formulas use them', async () => {
+    host = await open(planOf([[100, 50], [70, '=FOLD.FREQ(A2,Rate)', '=FOLD.FREQ(A2,Rate)+Rate']]));
+    expect(await results('B2:C2')).toEqual([[{ error: '#NAME?' }, { error: '#NAME?' }]]);
+    const name = { id: 'mine', name: 'Rate', localSheetId: 'AllDefaultWorkbook' };
+    await run(InsertDefinedNameCommand, { ...name, formulaOrRefString: 'Plan!$A$1' });
+    expect(await results('B2:C2')).toEqual([[30, 130]]);
+    await run(SetDefinedNameCommand, { ...name, formulaOrRefString: 'Plan!$B$1' });
+    expect(await results('B2:C2')).toEqual([[20, 70]]);
+    await run(RemoveDefinedNameCommand, { ...name, formulaOrRefString: 'Plan!$B$1' });
+    expect(await results('B2:C2')).toEqual([[{ error: '#REF!' }, { error: '#REF!' }]]);
   });
 });
 
