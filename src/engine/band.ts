@@ -105,6 +105,9 @@ export function bandMargin(low: number, high: number, rate: number, guard = 0, p
   return toNumber(margin(readBand(low, high), readRate(rate), readGuard(guard), readTolerance(ppm), sampling));
 }
 
+/** Whether a band lies within one zone of real sampling. */
+export const isWithinZone = (band: Interval, rate: Rational): boolean => margin(band, rate, ZERO, ZERO, 'real').n >= 0n;
+
 function margin(band: Interval, rate: Rational, guard: Rational, tolerance: Rational, sampling: Sampling): Rational {
   const { low, high } = folds(band, sampling);
   const { lower, upper } = zoneEdges(zoneExactly(centre({ low, high }), rate, sampling), rate, sampling);

@@ -1,6 +1,6 @@
 // What comes after the converter: a digital oscillator that moves a band to 0, and decimation.
 
-import { bandImage, bandInverted, bandMargin, readBand, readRate } from './band';
+import { bandImage, bandInverted, isWithinZone, readBand, readRate } from './band';
 import { checkCount } from './counts';
 import { faults } from './fault';
 import { type Interval, shift } from './interval';
@@ -30,7 +30,7 @@ export function downConvert(low: number, high: number, rate: number, oscillator:
   const lo = fromNumber(oscillator);
   if (lo.n < 0n || compare(lo, half(fs)) > 0) throw faults.outsideSpectrum('oscillator', oscillator, 0, toNumber(half(fs)), false);
   if (!(usable > 0 && usable <= 1)) throw faults.notFraction('usable', usable);
-  if (bandMargin(low, high, rate) < 0) throw faults.noOneImage(low, high, rate);
+  if (!isWithinZone(band, fs)) throw faults.noOneImage(low, high, rate);
   const moved: Interval = shift(bandImage(band, fs, 'real'), negate(lo));
   const reach = greatest(absolute(moved.low), absolute(moved.high));
   let output: Rational = fs;

@@ -73,7 +73,8 @@ export const faults = {
   attenuationBelowRipple: (attenuation: number, ripple: number) => input(`attenuation must be above ripple, ${shown(ripple)} dB; got ${shown(attenuation)}.`),
   noAttenuation: (response: string) => input(`attenuation must be given for the response "${response}"; got a blank cell.`),
   noOneImage: (low: number, high: number, rate: number) =>
-    none(`The band from ${shown(low)} to ${shown(high)} crosses a zone edge of the rate ${shown(rate)}, so it has no one image to convert.`),
+    none(`The band from ${shown(low)} to ${shown(high)} crosses a zone edge of the rate ${shown(rate)}, so it overlaps its own mirror.`),
+  noLevel: (frequency: number) => none(`The held output has nothing at ${shown(frequency)}.`),
   infiniteAttenuation: (frequency: number) => none(`The filter lets nothing through at ${shown(frequency)}.`),
   noLimit: () => input('to must be given where grid is a step; got a blank cell.'),
   badGrid: (value: unknown) => input(`grid must hold rates or one step, each above 0; got ${shown(value)}.`),

@@ -15,3 +15,4 @@ export { type Product, type Suspect, intermodulation, suspectsOf } from './produ
 export { type Plan, type Role } from './rules';
 export { type RateRange, clockTolerance, lowestRate, usableRates } from './single-band-rates';
 export { type Harmonic, type InterleavingSpur, type MixingProduct, harmonicsOf, interleavingSpurs, mixingProducts } from './spurs';
+export { type StopEdge, stopEdges } from './stop-band';

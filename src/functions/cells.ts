@@ -3,7 +3,7 @@
 // A host passes every argument as rows of cells, an argument left out as null. A blank cell is null, "" or, on some desktops, 0.
 // An error in a cell comes as an object with its code, and goes out again in the same row.
 
-import { Fault, type Hold, type Role, type Sampling, faults, inRow } from '../engine';
+import { Fault, type Hold, type Response, type Role, type Sampling, faults, inRow } from '../engine';
 
 /** What a host passes for an argument. */
 export type Cells = any[][] | null | undefined;
@@ -74,6 +74,10 @@ function word<T extends string>(name: string, cells: Cells, accepted: readonly T
 export const samplingKind = (cells: Cells): Argument<Sampling> => word('sampling', cells, ['real', 'iq']);
 
 export const holdKind = (cells: Cells): Argument<Hold> => word('hold', cells, ['nrz', 'rz', 'doublet']);
+
+/** The response of a filter; a row without one is blank. */
+export const responseKind = (cells: Cells): Argument<Response> =>
+  ({ ...word('response', cells, ['butterworth', 'chebyshev', 'inverse chebyshev', 'elliptic']), key: 'response' });
 
 /** How many of something, left out by a blank or by a 0, which would make no sense of its own. */
 export function count(name: string, cells: Cells, leftOut: number): Argument<number> {
@@ -233,6 +237,13 @@ export function vector<T>(argument: Argument<T>): T[] {
   const cells = asColumn(argument).cells.map((line) => line[0]);
   while (cells.length > 1 && isBlank(cells.at(-1))) cells.pop();
   return cells.map((cell) => value(argument, cell));
+}
+
+/** All numbers of a repeated argument, whatever the shape of its ranges; blank cells are left out. */
+export function allNumbers(name: string, ranges: readonly Cells[] | null | undefined): number[] {
+  const cells = (ranges ?? []).flatMap((range) => given(range).flat()).filter((cell) => !isBlank(cell));
+  if (cells.length === 0) throw faults.notNumber(name, null);
+  return cells.map((cell) => value(number(name, null), cell));
 }
 
 function value<T>(argument: Argument<T>, cell: unknown): T {

@@ -49,7 +49,7 @@ describe('down-conversion and decimation', () => {
     ['input', 'oscillator must be from 0 to 50, where this rate puts frequencies; got 60.', () => downConvert(70, 74, 100, 60, [2], 1)],
     ['input', 'decimation must be a whole number, 1 or more; got 2.5.', () => downConvert(70, 74, 100, 28, [2.5], 1)],
     ['input', 'usable must be above 0 and at most 1; got 1.5.', () => downConvert(70, 74, 100, 28, [2], 1.5)],
-    ['none', 'The band from 48 to 52 crosses a zone edge of the rate 100, so it has no one image to convert.', () => downConvert(48, 52, 100, 28, [2], 1)],
+    ['none', 'The band from 48 to 52 crosses a zone edge of the rate 100, so it overlaps its own mirror.', () => downConvert(48, 52, 100, 28, [2], 1)],
   ])('say in words (%s): %s', (kind, sentence, ask) => expect(ask).toThrow(new Fault(kind, sentence)));
 });
 
