@@ -1,0 +1,66 @@
+// The pane's sections as trees: what the plan lacks, the rate at a glance, the table of figures.
+
+import { type Tree, element } from './element';
+import type { PlanFigures, RowFigures } from './figures';
+import { exactFigure } from './number-text';
+import type { NameOfPlan } from './sentences';
+import { sentences } from './sentences';
+import type { Headline } from './words';
+
+/** How many objections stand in view; the others are a click away. */
+const IN_VIEW = 5;
+
+/** What to name in the workbook before there is a plan. */
+export function setUpSection(missing: NameOfPlan[]): Tree {
+  return element('section', { class: 'set-up' },
+    element('p', {}, sentences.setUp),
+    element('ul', {}, ...missing.map((name) => element('li', {}, element('code', {}, name.name), sentences.setUpLine(name)))));
+}
+
+export function noticeList(notices: string[]): Tree {
+  return element('ul', { class: 'notices' }, ...notices.map((notice) => element('li', {}, notice)));
+}
+
+export function headlineSection({ outcome, verdict, facts, objections, remarks }: Headline): Tree {
+  const line = (sentence: string) => element('li', {}, sentence);
+  const rest = objections.slice(IN_VIEW);
+  return element('section', { class: 'headline', 'data-outcome': outcome },
+    element('p', { class: 'verdict', role: 'status' }, verdict),
+    ...remarks.map((remark) => element('p', { class: 'remark' }, remark)),
+    element('dl', { class: 'facts' }, ...facts.map(({ what, figure }) => element('div', {}, element('dt', {}, what), element('dd', {}, figure)))),
+    ...(objections.length > 0 ? [element('ul', { class: 'objections' }, ...objections.slice(0, IN_VIEW).map(line))] : []),
+    ...(rest.length > 0
+      ? [element('details', { 'data-keep': 'objections' }, element('summary', {}, sentences.andMore(rest.length)), element('ul', { class: 'objections' }, ...rest.map(line)))]
+      : []));
+}
+
+/** The facts of the picture as a table. Its cells name their column, for panes too narrow to hold the columns side by side. */
+export function tableSection({ plan, rows }: PlanFigures): Tree {
+  const caption = plan.rate === null ? sentences.tableCaptionWithoutRate : sentences.tableCaption(exactFigure(plan.rate));
+  return element('details', { class: 'figures', 'data-keep': 'figures' },
+    element('summary', {}, sentences.tableSummary(rows.length)),
+    element('table', { role: 'table' },
+      element('caption', {}, caption),
+      element('thead', { role: 'rowgroup' }, element('tr', { role: 'row' },
+        ...sentences.columns.map((title) => element('th', { role: 'columnheader', scope: 'col' }, title)))),
+      element('tbody', { role: 'rowgroup' }, ...rows.map(tableRow))));
+}
+
+function tableRow({ row, number, band, problem }: RowFigures): Tree {
+  const figure = (x: number | null | undefined) => (x === null || x === undefined ? '' : exactFigure(x));
+  const cells = [
+    String(number), row.name, row.role, figure(row.low), figure(row.high),
+    ...(band
+      ? [String(band.zone), band.inverted ? sentences.yes : sentences.no, figure(band.imageLow), figure(band.imageHigh), figure(band.margin), band.check]
+      : ['', '', '', '', '', '']),
+  ];
+  const lastColumn = cells.length - 1;
+  if (problem) cells[lastColumn] = cells[lastColumn] === '' ? problem : `${cells[lastColumn]}. ${problem}`;
+  return element('tr', { role: 'row', class: row.role, 'data-row': row.index }, ...cells.map((cell, i) => element(
+    i === 1 ? 'th' : 'td',
+    { role: i === 1 ? 'rowheader' : 'cell', scope: i === 1 ? 'row' : undefined, 'data-column': sentences.columns[i], class: COLUMN_KINDS[i] },
+    ...(cell === '' ? [] : [i === 1 ? element('bdi', {}, cell) : cell]),
+  )));
+}
+
+const COLUMN_KINDS = ['figure', 'words', 'words', 'figure', 'figure', 'figure', 'words', 'figure', 'figure', 'figure', 'words'];

@@ -1,0 +1,82 @@
+// What the figures of a plan come to in words.
+
+import type { BandFigures, Pair, PlanFigures } from './figures';
+import { exactFigure } from './number-text';
+import { isolated, sentences } from './sentences';
+
+/** The rate at a glance. */
+export interface Headline {
+  /** `works`, only `narrowly` (without guard and tolerance), or `fails`; `open` where nothing is wanted. */
+  outcome: 'works' | 'narrowly' | 'fails' | 'open';
+  verdict: string;
+  facts: { what: string; figure: string }[];
+  /** What speaks against the rate, the worst first. */
+  objections: string[];
+  remarks: string[];
+}
+
+/** For a plan whose rate is known. */
+export function headline(figures: PlanFigures): Headline {
+  const { plan, rows, bands, pairs } = figures;
+  const wanted = bands.filter(({ row }) => row.role === 'wanted');
+  const count = (...states: BandFigures['state'][]) => wanted.filter(({ state }) => states.includes(state)).length;
+  const overlaps = pairs.filter(({ gap }) => gap < 0).length;
+  const outcome = wanted.length === 0 ? 'open'
+    : overlaps > 0 || count('crosses', 'too wide') > 0 ? 'fails'
+    : pairs.length > 0 || count('tight') > 0 ? 'narrowly' : 'works';
+  const rate = exactFigure(plan.rate!);
+  const smallest = wanted.reduce<BandFigures | null>((least, band) => (least === null || band.margin < least.margin ? band : least), null);
+  const unread = rows.length - bands.length;
+  const { facts } = sentences;
+  return {
+    outcome,
+    verdict: { open: sentences.nothingWanted, fails: sentences.fails, narrowly: sentences.worksNarrowly, works: sentences.works }[outcome](rate),
+    facts: [
+      { what: facts.rate, figure: rate },
+      { what: facts.allowance, figure: sentences.allowance(exactFigure(plan.guard), exactFigure(plan.ppm)) },
+      { what: facts.wanted, figure: String(wanted.length) },
+      { what: facts.clear, figure: String(count('clear')) },
+      { what: facts.tight, figure: String(count('tight')) },
+      { what: facts.crossing, figure: String(count('crosses', 'too wide')) },
+      { what: facts.overlaps, figure: String(overlaps) },
+      ...(plan.guard > 0 ? [{ what: facts.near, figure: String(pairs.length - overlaps) }] : []),
+      ...(smallest ? [{ what: facts.margin, figure: sentences.marginOf(exactFigure(smallest.margin), isolated(smallest.row.name)) }] : []),
+    ],
+    objections: [...wanted.filter(({ state }) => state !== 'clear').map(bandObjection), ...pairs.map((pair) => pairObjection(pair, plan.guard))]
+      .sort((a, b) => a.severity - b.severity || a.by - b.by).map(({ sentence }) => sentence),
+    remarks: [
+      ...(unread > 0 ? [sentences.asFarAsRead(unread)] : []),
+      ...(plan.ppm > 0 && pairs.length === 0 && outcome !== 'open' ? [sentences.nominalGaps(rate)] : []),
+    ],
+  };
+}
+
+/** A band in one sentence, with every figure exactly. */
+export function bandSentence({ row, low, high, zone, inverted, imageLow, imageHigh, margin, check }: BandFigures): string {
+  return sentences.band({
+    name: isolated(row.name), role: row.role, low: exactFigure(low), high: exactFigure(high), zone: String(zone), inverted,
+    imageLow: exactFigure(imageLow), imageHigh: exactFigure(imageHigh), margin: exactFigure(margin), check,
+  });
+}
+
+/** What breaks comes before what is merely near; within that, the larger amount first. */
+interface Objection {
+  severity: 0 | 1;
+  by: number;
+  sentence: string;
+}
+
+function bandObjection({ row, state, check, margin }: BandFigures): Objection {
+  const name = isolated(row.name);
+  const sentence = state === 'tight' ? sentences.tight(name, exactFigure(margin))
+    : state === 'too wide' ? sentences.tooWide(name, exactFigure(margin))
+    : sentences.crosses(name, check.replace('crosses ', ''), exactFigure(margin));
+  return { severity: state === 'tight' ? 1 : 0, by: margin, sentence };
+}
+
+function pairObjection({ first, second, gap, low, high }: Pair, guard: number): Objection {
+  const names = [isolated(first.row.name), isolated(second.row.name)] as const;
+  return gap < 0
+    ? { severity: 0, by: gap, sentence: sentences.overlap(...names, exactFigure(-gap), exactFigure(low), exactFigure(high)) }
+    : { severity: 1, by: gap - guard, sentence: sentences.near(...names, exactFigure(gap), exactFigure(guard)) };
+}
