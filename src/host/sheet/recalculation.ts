@@ -4,33 +4,111 @@ import type { ICommandService, IRange, IUnitRange } from '@univerjs/core';
 import { type FormulaDataModel, SetTriggerFormulaCalculationStartMutation } from '@univerjs/engine-formula';
 import type { FormulaCalculationSessionService } from '@univerjs/sheets-formula';
 
-/** Calls `listener` once after every recalculation, when its results stand in the cells, until the returned function is called. */
-export function onRecalculated(session: FormulaCalculationSessionService, listener: () => void): () => void {
-  let told = session.state.id;
-  const subscription = session.state$.subscribe(({ id, started, resultApplied, completed, resultEmitted }) => {
-    if (id === told || !started || !resultApplied || !(completed || resultEmitted)) return;
-    told = id;
-    listener();
-  });
-  return () => subscription.unsubscribe();
+type State = FormulaCalculationSessionService['state'];
+
+/** Follows the recalculations of a sheet. Univer numbers them; each begins a tenth of a second after the change that asks for it. */
+export class Recalculation {
+  /** Number of the recalculation that will have seen the last change. */
+  private due = 0;
+  /** Whether that one is sure to come: a change of styles asks for none. */
+  private certain = false;
+  private readonly blocks: BlockFollower;
+
+  constructor(private readonly session: FormulaCalculationSessionService, formulas: FormulaDataModel, commands: ICommandService) {
+    this.blocks = new BlockFollower(formulas, commands);
+    this.onDone(() => this.blocks.follow());
+  }
+
+  /** A workbook has been opened, which is certain to be computed. */
+  opened(): void {
+    this.blocks.forget();
+    this.due = this.session.state.id + 1;
+    this.certain = true;
+  }
+
+  /** A cell, a name or something else has changed. */
+  changed(): void {
+    this.due = this.session.state.id + 1;
+  }
+
+  /** Calls `listener` once after every recalculation, when its results stand in the cells, until the returned function is called. */
+  onDone(listener: () => void): () => void {
+    let told = this.session.state.id;
+    const subscription = this.session.state$.subscribe((state) => {
+      if (state.id === told || !isDone(state)) return;
+      told = state.id;
+      listener();
+    });
+    return () => subscription.unsubscribe();
+  }
+
+  /** Calls `listener` whenever a recalculation has come further, until the returned function is called. */
+  onProgress(listener: (done: number, total: number) => void): () => void {
+    let told = '';
+    const subscription = this.session.state$.subscribe(({ progress }) => {
+      const [done, total] = [progress?.completedFormulasCount ?? 0, progress?.totalFormulasToCalculate ?? 0];
+      if (done === 0 || told === `${done}/${total}`) return;
+      told = `${done}/${total}`;
+      listener(done, total);
+    });
+    return () => subscription.unsubscribe();
+  }
+
+  /** Resolves when everything that has changed so far is computed. */
+  async settled(): Promise<void> {
+    await this.until(() => !this.isRunning() && this.session.state.id >= this.due && !this.blocks.pending);
+    this.certain = false;
+  }
+
+  /** Resolves when no recalculation is under way. */
+  idle(): Promise<void> {
+    return this.until(() => !this.isRunning());
+  }
+
+  /** Gives up where nothing moves for half a second, and nothing is sure to. */
+  private async until(isOver: () => boolean): Promise<void> {
+    let seen = this.session.state;
+    for (let looks = 0; !isOver() && looks < LOOKS; looks++) {
+      await pause();
+      const { state } = this.session;
+      if (state !== seen || this.certain || (this.isRunning() && !state.stopped)) looks = 0;
+      seen = state;
+    }
+  }
+
+  private isRunning(): boolean {
+    const { state } = this.session;
+    return state.started && !isDone(state);
+  }
 }
+
+const LOOKS = 100;
+const pause = () => new Promise((resume) => setTimeout(resume, 5));
+
+/** One that was stopped, for a change that came meanwhile, goes on under its own number or under the next. */
+const isDone = ({ started, resultApplied, completed, resultEmitted, stopped }: State): boolean => started && resultApplied && (completed || resultEmitted) && !stopped;
 
 /**
  * A formula may fill a block of cells. Univer follows such blocks two deep in one recalculation: a block made from a block that is made
  * from a block is left as it was. So the cells that depend on a changed block are computed again, until no block changes.
  */
-export class BlockFollower {
+class BlockFollower {
   /** Whether another recalculation has been asked for. */
   pending = false;
   /** What changed in each pass since something else than this class asked for a recalculation. */
   private passes: string[] = [];
   private known = new Map<string, string>();
 
-  constructor(session: FormulaCalculationSessionService, private readonly formulas: FormulaDataModel, private readonly commands: ICommandService) {
-    onRecalculated(session, () => this.follow());
+  constructor(private readonly formulas: FormulaDataModel, private readonly commands: ICommandService) {}
+
+  forget(): void {
+    this.pending = false;
+    this.passes = [];
+    this.known = new Map();
   }
 
-  private follow(): void {
+  /** To be called after every recalculation. */
+  follow(): void {
     this.pending = false;
     const blocks = this.blocks();
     const changed = [...blocks].filter(([key, values]) => this.known.get(key) !== values).map(([key]) => key);

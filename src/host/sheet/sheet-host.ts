@@ -4,20 +4,20 @@ import {
   type ICellData, type IDisposable, type Univer, type Workbook as UniverWorkbook, type Worksheet, ICommandService, IUndoRedoService,
   IUniverInstanceService, UniverInstanceType, generateRandomId,
 } from '@univerjs/core';
-import { FORMULA_REF_TO_ARRAY_CACHE, FormulaDataModel, FormulaExecuteStageType, ICalculateFormulaService, IDefinedNamesService } from '@univerjs/engine-formula';
+import { FORMULA_REF_TO_ARRAY_CACHE, FormulaDataModel, ICalculateFormulaService, IDefinedNamesService } from '@univerjs/engine-formula';
 import { SetRangeValuesCommand, SetWorksheetColumnCountCommand, SetWorksheetRowCountCommand, SheetsSelectionsService } from '@univerjs/sheets';
 import { FormulaCalculationSessionService } from '@univerjs/sheets-formula';
 import { type Block, type CellError, type CellInput, type CellValue, type Host, type Workbook, HostFault } from '../port';
 import { type CellRange, formatCell, formatRange, parseReference } from './address';
 import { cellData, plainValue } from './cell-values';
 import { FunctionError, NAMESPACE } from './functions-runtime';
-import { BlockFollower, onRecalculated } from './recalculation';
+import { Recalculation } from './recalculation';
 import type { Listener } from './univer-functions';
 import { formulaAt, fromWorkbook, spills, toWorkbookData } from './workbook-data';
 
 export class SheetHost implements Host {
   private workbook: UniverWorkbook | null = null;
-  private blocks: BlockFollower | null = null;
+  private calculation: Recalculation | null = null;
 
   /**
    * Load a workbook before anything else.
@@ -51,7 +51,7 @@ export class SheetHost implements Host {
   }
 
   async onRecalculated(listener: () => void): Promise<() => Promise<void>> {
-    const stop = onRecalculated(this.session, listener);
+    const stop = this.recalculation.onDone(listener);
     return async () => stop();
   }
 
@@ -63,15 +63,15 @@ export class SheetHost implements Host {
    */
   async load(workbook: Workbook, onProgress: (done: number, total: number) => void = () => {}): Promise<void> {
     const data = toWorkbookData(workbook, generateRandomId());
-    if (this.workbook) this.get(IUniverInstanceService).disposeUnit(this.workbook.getUnitId());
+    if (this.workbook) {
+      await this.recalculation.idle(); // of a workbook that is gone, nothing can be computed
+      this.get(IUniverInstanceService).disposeUnit(this.workbook.getUnitId());
+    }
     this.workbook = this.univer.createUnit<object, UniverWorkbook>(UniverInstanceType.UNIVER_SHEET, data);
-    this.blocks ??= new BlockFollower(this.session, this.get(FormulaDataModel), this.get(ICommandService));
-    const progress = this.session.state$.subscribe(({ progress }) => {
-      if (progress?.stage !== FormulaExecuteStageType.CURRENTLY_CALCULATING) return;
-      onProgress(progress.completedFormulasCount, progress.totalFormulasToCalculate);
-    });
+    this.recalculation.opened();
+    const stop = this.recalculation.onProgress(onProgress);
     await this.settled();
-    progress.unsubscribe();
+    stop();
   }
 
   save(): Workbook {
@@ -79,9 +79,8 @@ export class SheetHost implements Host {
   }
 
   /** Resolves when nothing is left to compute. */
-  async settled(): Promise<void> {
-    do await this.session.waitForLatestApplied();
-    while (this.blocks?.pending);
+  settled(): Promise<void> {
+    return this.recalculation.settled();
   }
 
   /** Calls `listener` after every change that a user or a write makes, until the returned function is called. */
@@ -168,7 +167,7 @@ export class SheetHost implements Host {
    */
   private async sentences(sheet: Worksheet, errors: PlacedError[]): Promise<PlacedSentence[]> {
     if (errors.length === 0) return [];
-    await this.idle();
+    await this.recalculation.idle();
     const formulas = this.get(FormulaDataModel);
     const blocks = spills(sheet, formulas);
     const anchored = errors.map((error) => {
@@ -203,16 +202,16 @@ export class SheetHost implements Host {
     return heard;
   }
 
-  /** Resolves when no recalculation is under way. */
-  private idle(): Promise<void> {
-    const { started, resultApplied } = this.session.state;
-    return started && !resultApplied ? this.settled() : Promise.resolve();
-  }
-
   // Univer's services
 
-  private get session(): FormulaCalculationSessionService {
-    return this.get(FormulaCalculationSessionService);
+  /** Univer's services for sheets exist once there is a sheet. */
+  private get recalculation(): Recalculation {
+    if (!this.calculation) {
+      const calculation = new Recalculation(this.get(FormulaCalculationSessionService), this.get(FormulaDataModel), this.get(ICommandService));
+      this.calculation = calculation;
+      this.onEdited(() => calculation.changed());
+    }
+    return this.calculation;
   }
 
   private get get() {

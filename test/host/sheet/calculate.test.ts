@@ -107,6 +107,16 @@ describe('a workbook recalculated without a window', () => {
     ]]);
   });
 
+  it('tells the sentence where the cause is a cell that another formula fills', async () => {
+    expect(await calculated([
+      [1, '=IF(A1:A2=1,70,"fast")', '=FOLD.FREQ(B2,100)', '=FOLD.FREQ(B1:B2,100)'],
+      [2],
+    ])).toEqual([
+      [1, 70, { error: '#VALUE!', message: 'frequency must be a number; got "fast".' }, 30],
+      [2, 'fast', null, { error: '#VALUE!', message: 'frequency must be a number; got "fast".' }],
+    ]);
+  });
+
   it('tells names from functions that are spelled like them', async () => {
     expect(await calculated(
       [['=FOLD.FREQ(70,Rate)', 100, '=RATE(10,-100,800)', '=Rate*2', '="Rate "&rate', '=SUM(Rate,Sum)'], [7]],
