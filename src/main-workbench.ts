@@ -38,10 +38,11 @@ async function start(): Promise<void> {
     nameCurrent(page, demoPlanName, false);
     page.tell(sentences.welcome);
     page.busy(false);
-    await mountPane(host, page.pane);
   } catch {
     page.complain(sentences.cannotStart);
+    return;
   }
+  mountPane(host, page.pane).catch(() => page.complain(sentences.noPictures));
 }
 
 /** The contract of every host, loaded as a page loads it. */

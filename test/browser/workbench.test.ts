@@ -263,8 +263,7 @@ describe('the workbench for everyone', () => {
 
   it('fits a window 320 pixels wide', async () => {
     await page.setViewportSize({ width: 320, height: 640 });
-    await page.waitForTimeout(500);
-    expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBe(320);
+    await expect.poll(() => page.evaluate(() => document.documentElement.scrollWidth)).toBe(320);
     for (const button of await page.locator('.bar button, .bar a').all()) {
       const box = (await button.boundingBox())!;
       expect(box.x + box.width).toBeLessThanOrEqual(320);
