@@ -39,10 +39,6 @@ interface Job {
   settings: { reference: string; value: CellInput }[];
 }
 
-void run(process.argv.slice(2)).then((code) => {
-  process.exitCode = code;
-});
-
 async function run(args: string[]): Promise<number> {
   try {
     const job = readArguments(args);
@@ -214,3 +210,7 @@ class Progress {
     if (this.#terminal && this.#shown) process.stderr.write('\r\x1b[K');
   }
 }
+
+void run(process.argv.slice(2)).then((code) => {
+  process.exitCode = code;
+});
