@@ -3,13 +3,13 @@
 import './pane.css';
 import { type Host, HostFault } from '../host/port';
 import { type PlanFigures, figuresOf } from './figures';
-import { ladderLayout } from './ladder-layout';
-import { ladderPicture } from './ladder-picture';
+import { ladderLayout } from './ladder/layout';
+import { ladderPicture } from './ladder/picture';
 import { headlineSection, noticeList, setUpSection, tableSection } from './page';
 import { type Plan, readPlan } from './plan';
 import { sentences } from './sentences';
 import { slot } from './slot';
-import { stepThroughBands } from './stepping';
+import { stepThroughBands } from './ladder/stepping';
 import { headline } from './words';
 
 /** Recalculations within this many milliseconds are read once. */

@@ -1,9 +1,9 @@
 // What all parts of the zone ladder share: the folded axis in pixels, texts, and bars with their labels.
 
-import type { BandFigures } from './figures';
-import { figureWriter } from './number-text';
-import { isolated, sentences } from './sentences';
-import { fitText, textWidth } from './text-width';
+import type { BandFigures } from '../figures';
+import { figureWriter } from '../number-text';
+import { isolated, sentences } from '../sentences';
+import { fitText, textWidth } from '../text-width';
 import { type PlacedBar, type PlacedLabel, placeInTracks } from './tracks';
 
 export interface Frame {

@@ -1,10 +1,10 @@
 // The lowest part of the zone ladder: every image on the common axis, and where images land on one another.
 
 import { ticks } from 'd3-array';
-import type { BandFigures, Pair, PlanFigures } from './figures';
-import { type BarLabel, type BarShape, type Frame, LABEL, PAD, SMALL, type Text, pack, place, stretch, text } from './ladder-frame';
-import { sentences } from './sentences';
-import { textWidth } from './text-width';
+import type { BandFigures, Pair, PlanFigures } from '../figures';
+import { type BarLabel, type BarShape, type Frame, LABEL, PAD, SMALL, type Text, pack, place, stretch, text } from './frame';
+import { sentences } from '../sentences';
+import { textWidth } from '../text-width';
 
 export interface Output {
   top: number;

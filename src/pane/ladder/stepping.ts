@@ -1,7 +1,7 @@
 // Going from band to band in the picture: one stop for the tab key, arrow keys within, and the figures of the band at hand in words.
 
-import { toDom, element } from './element';
-import { sentences } from './sentences';
+import { toDom, element } from '../element';
+import { sentences } from '../sentences';
 
 export interface Stepping {
   readout: HTMLElement;

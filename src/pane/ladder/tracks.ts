@@ -1,6 +1,6 @@
 // Bars with their labels in as few tracks as keep them from touching.
 
-import { fitText, textWidth } from './text-width';
+import { fitText, textWidth } from '../text-width';
 
 export interface Bar {
   from: number;

@@ -1,8 +1,8 @@
 // The rungs of the zone ladder: one for each zone that holds an end of a band, the highest on top, and a note where zones are skipped.
 
-import type { BandFigures, Section } from './figures';
-import { type BarLabel, type BarShape, type Frame, type Link, SMALL, SWING, type Text, PAD, edgeAt, pack, stretch, text } from './ladder-frame';
-import { isolated, sentences } from './sentences';
+import type { BandFigures, Section } from '../figures';
+import { type BarLabel, type BarShape, type Frame, type Link, SMALL, SWING, type Text, PAD, edgeAt, pack, stretch, text } from './frame';
+import { isolated, sentences } from '../sentences';
 
 export interface Rung {
   zone: number;

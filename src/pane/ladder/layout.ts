@@ -3,12 +3,12 @@
 // From top to bottom: a heading; a rung for each zone that holds an end of a band, the highest zone on top; what the converter puts
 // out; the axis; a legend.
 
-import type { BandFigures, PlanFigures } from './figures';
-import { type Frame, LABEL, type Link, PAD, SMALL, type Text, frameOf, text } from './ladder-frame';
-import { type Image, layOutput } from './ladder-output';
-import { type Piece, type Rung, bandLinks, drawnZones, layRungs } from './ladder-rungs';
-import { exactFigure } from './number-text';
-import { sentences } from './sentences';
+import type { BandFigures, PlanFigures } from '../figures';
+import { type Frame, LABEL, type Link, PAD, SMALL, type Text, frameOf, text } from './frame';
+import { type Image, layOutput } from './output';
+import { type Piece, type Rung, bandLinks, drawnZones, layRungs } from './rungs';
+import { exactFigure } from '../number-text';
+import { sentences } from '../sentences';
 
 export interface LadderLayout {
   width: number;

@@ -1,14 +1,14 @@
 // The zone ladder as an SVG tree. Colours and lines are pane.css's business; what must not depend on colour is drawn: hatching,
 // slopes, brackets, outlines.
 
-import { type Tree, element } from './element';
-import type { BarLabel, BarShape, Link, Text } from './ladder-frame';
-import { PAD, SWING } from './ladder-frame';
-import type { BandLayout, LadderLayout, LegendEntry } from './ladder-layout';
-import type { Rung } from './ladder-rungs';
-import { bandSentence } from './words';
-import { exactFigure } from './number-text';
-import { sentences } from './sentences';
+import { type Tree, element } from '../element';
+import type { BarLabel, BarShape, Link, Text } from './frame';
+import { PAD, SWING } from './frame';
+import type { BandLayout, LadderLayout, LegendEntry } from './layout';
+import type { Rung } from './rungs';
+import { bandSentence } from '../words';
+import { exactFigure } from '../number-text';
+import { sentences } from '../sentences';
 
 /**
  * The picture. Each band is one focusable group, in the order of the plan, that carries its row in `data-row`.
