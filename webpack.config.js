@@ -26,7 +26,7 @@ const { version } = JSON.parse(readFileSync(at('package.json'), 'utf8'));
 const VENDOR_OFFICE_JS = 'https://appsforoffice.microsoft.com/lib/1/hosted/office.js';
 
 /** Source files that hold worksheet functions, in the order of the function list. */
-const FAMILIES = ['landing', 'rates', 'spurs'].map((family) => at('src/functions', `${family}.ts`));
+const FAMILIES = ['landing', 'rates', 'spurs', 'filter', 'noise', 'converter'].map((family) => at('src/functions', `${family}.ts`));
 
 /**
  * The part of the vendor's package that a self-hosted Office.js consists of. The rest is typings, debug builds, other hosts, and the

@@ -68,7 +68,7 @@ describe('the formulas of the README', () => {
 describe('the function list of the README', () => {
   it('names every function with its arguments', () => {
     const listed = [...readme.matchAll(/^\| (`[A-Z]+\([^|]*) \|/gm)].flatMap(([, cell]) => [...cell!.matchAll(/`([A-Z]+)\((.*?)\)`/g)].map(([, id, args]) => [id!, args!] as const));
-    const signature = (id: string) => built.metadata.find((one) => one.id === id)!.parameters.map(({ name, optional }) => (optional ? `[${name}]` : name)).join(', ');
+    const signature = (id: string) => built.metadata.find((one) => one.id === id)!.parameters.map(({ name, optional, repeating }) => (optional ? `[${name}]` : repeating ? `${name}…` : name)).join(', ');
     expect(listed.map(([id]) => id)).toEqual(built.metadata.map(({ id }) => id));
     for (const [id, args] of listed) if (args !== '…') expect([id, args]).toEqual([id, signature(id)]);
   });

@@ -5,7 +5,7 @@ import { checkCount, checkListing } from './counts';
 import { faults } from './fault';
 import { isEven } from './folding';
 import { type Interval, centre, mirror, shift } from './interval';
-import { compare, half, times, toNumber } from './rational';
+import { type Rational, compare, divide, fromNumber, half, times, toNumber } from './rational';
 
 /** Held for the whole period, for its first half, or for its first half and then reversed for the second. */
 export type Hold = 'nrz' | 'rz' | 'doublet';
@@ -15,18 +15,31 @@ export type Hold = 'nrz' | 'rz' | 'doublet';
  * It is the Fourier transform of the held pulse: with x = f/rate, sinc(x), sinc(x/2)/2, or sin²(πx/2)/(πx/2).
  * @param frequency 0 or more
  * @param rate above 0
+ * @throws Fault where an argument is out of range
  * @example holdLevel(50, 100, 'nrz').toFixed(2) // => '-3.92'
  */
 export function holdLevel(frequency: number, rate: number, hold: Hold): number | null {
-  const x = (Math.PI * frequency) / rate;
-  // Whole periods in a pulse cancel: exactly, where the quotient is exact.
-  const sinc = (y: number, turns: number) => (y === 0 ? 1 : Number.isInteger(turns) ? 0 : Math.sin(y) / y);
+  const fs = readRate(rate);
+  if (!(frequency >= 0)) throw faults.negative('frequency', frequency);
+  return levelAt(divide(fromNumber(frequency), fs), hold);
+}
+
+/** @param turns frequency/rate */
+function levelAt(turns: Rational, hold: Hold): number | null {
+  const angle = Math.PI * toNumber(turns);
   const size = {
-    nrz: () => sinc(x, frequency / rate),
-    rz: () => sinc(x / 2, frequency / rate / 2) / 2,
-    doublet: () => sinc(x / 2, frequency / rate / 2) * Math.sin(x / 2),
+    nrz: () => sinc(turns),
+    rz: () => sinc(half(turns)) / 2,
+    doublet: () => sinc(half(turns)) * Math.sin(angle / 2),
   }[hold]();
   return size === 0 ? null : 20 * Math.log10(Math.abs(size));
+}
+
+/** sin(πx)/(πx). Whole periods in a pulse cancel: exactly. */
+function sinc(x: Rational): number {
+  if (x.n % x.d === 0n) return x.n === 0n ? 1 : 0;
+  const angle = Math.PI * toNumber(x);
+  return Math.sin(angle) / angle;
 }
 
 export interface OutputImage {
@@ -56,6 +69,6 @@ export function outputImages(low: number, high: number, rate: number, zones: num
   return Array.from({ length: zones }, (_, i) => {
     const zone = BigInt(i + 1);
     const image: Interval = isEven(zone) ? shift(mirror(band), times(fs, zone / 2n)) : shift(band, times(fs, zone / 2n));
-    return { zone: i + 1, low: toNumber(image.low), high: toNumber(image.high), inverted: isEven(zone), level: holdLevel(toNumber(centre(image)), rate, hold) };
+    return { zone: i + 1, low: toNumber(image.low), high: toNumber(image.high), inverted: isEven(zone), level: levelAt(divide(centre(image), fs), hold) };
   });
 }

@@ -7,6 +7,7 @@ export { type ClockRate, clockRates } from './clock-rates';
 export { coherentCycles, coherentFrequency } from './coherent';
 export { Fault, faults, inRow } from './fault';
 export { type Edges, type Response, filterAttenuation, filterOrder } from './filter';
+export { type Forbidding, type ForbiddenRates, forbiddenRates } from './forbidden';
 export { type Sampling, foldedFrequency, frequencyZone, isInverted } from './folding';
 export { type Hold, type OutputImage, holdLevel, outputImages } from './hold';
 export { effectiveBits, foldedNoise, jitterLimit, jitterSnr, quantizationSnr, sumSnr } from './noise';

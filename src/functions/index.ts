@@ -3,3 +3,6 @@
 export * from './landing';
 export * from './rates';
 export * from './spurs';
+export * from './filter';
+export * from './noise';
+export * from './converter';

@@ -58,7 +58,22 @@ const GIVES: Record<string, unknown[][]> = {
   MIXING:    [[0, 1, 100, 100, 100, 100], [1, -1, 88, 90, 88, 90], [1, 1, 110, 112, 110, 112]],
   INTERMOD:  [['f2-f1', 2, 1, 1], ['2·f1', 2, 10, 6], ['f1+f2', 2, 11, 5], ['2·f2', 2, 12, 4]],
   SOURCES:   [['clock image 1/2', 1, 14, 0], ['2·carrier', 2, 14, 0]],
-  DACIMAGES: [[1, 10, 20, false, -6.101117566707631], [2, 80, 90, true, -8.774745652676724], [3, 110, 120, false, -11.400323945463104]],
+  DACIMAGES: [[1, 10, 20, false, expect.closeTo(-6.101117566707631, 12)], [2, 80, 90, true, expect.closeTo(-8.774745652676724, 12)], [3, 110, 120, false, expect.closeTo(-11.400323945463104, 12)]],
+  STOPBAND:  [[40, 110, 20, 20]],
+  FILTERORDER: [[7]], // acosh √(999999/0.2589) / acosh((110² − 60·90)/(110·30)) is 6.2
+  ATTENUATION: [[expect.closeTo(14.1446446209097, 12)]], // 10·lg(1 + 0.2589·T₃(w)²) at w = (100² − 60·90)/(100·30)
+  JITTERSNR: [[expect.closeTo(64.0364026328377, 12)]], // −20·lg(2π·10⁻⁴)
+  JITTERLIMIT: [[expect.closeTo(1.00419980254158e-6, 18)]],
+  QUANTSNR:  [[expect.closeTo(80.9978115932725, 12)]], // 20·lg(2¹²·√1.5) + 10·lg 5
+  SUMSNR:    [[expect.closeTo(66.9897000433602, 12)]], // 70 − 10·lg 2
+  ENOB:      [[expect.closeTo(11.9986527007227, 12)]],
+  NOISEFOLD: [[expect.closeTo(0.128372247051722, 12)]], // 10·lg 1.03
+  DROOP:     [[expect.closeTo(-6.24500441566178, 12)]],
+  COHERENT:  [[10.05859375]], // 102.4 cycles; of the odd numbers 103 is nearest
+  CYCLES:    [[103]],
+  CHAIN:     [[-15, 15, 50, 7.5, true], [-15, 15, 25, -3.75, true]],
+  TUNINGWORD: [[2 ** 30]],
+  TUNED:     [[10.15625]], // 25.6 of 256; 26
 };
 
 /** Numbers of the codes with which a thrown error reaches the program. */

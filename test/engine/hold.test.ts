@@ -29,6 +29,7 @@ describe('a held output', () => {
 
   it('is nothing at the zeros of its transform', () => {
     expect([holdLevel(100, 100, 'nrz'), holdLevel(300, 100, 'nrz'), holdLevel(200, 100, 'rz'), holdLevel(200, 100, 'doublet'), holdLevel(0, 100, 'doublet')]).toEqual([null, null, null, null, null]);
+    expect(holdLevel(0.3, 0.1, 'nrz')).toBeNull(); // whose quotient as doubles is no whole number
     expect(holdLevel(100, 100, 'rz')).not.toBeNull();
   });
 });

@@ -22,8 +22,7 @@ export const asCells = (given: Given): Argument | null => {
 export function call(id: string, ...args: Given[]): unknown[][] {
   const { metadata, implementations } = built;
   const { parameters } = metadata.find((one) => one.id === id)!;
-  const all = parameters.map((_, i) => asCells(args[i] ?? null));
-  return callFunction(implementations.get(id)!, all).map((line) =>
+  return callFunction(implementations.get(id)!, parameters, args.map(asCells)).map((line) =>
     line.map((cell) => (cell instanceof FunctionError ? [cell.code, cell.message].filter(Boolean).join(' ') : cell)));
 }
 
@@ -54,4 +53,19 @@ export const FULL_CALLS: Record<string, Given[]> = {
   INTERMOD: [[5, 6], 16, 2, false],
   SOURCES: [6, 20, [7, 4], 3, 0.5, 2, ['carrier', 'clock'], false],
   DACIMAGES: [10, 20, 100, 3, 'rz', false],
+  STOPBAND: [60, 90, 100, false],
+  FILTERORDER: ['chebyshev', 60, 90, 40, 110, 1, 60],
+  ATTENUATION: ['chebyshev', 3, 60, 90, 1, 100, 40],
+  JITTERSNR: [100, 1e-6],
+  JITTERLIMIT: [100, 64],
+  QUANTSNR: [12, 100, 10],
+  SUMSNR: [[70, 70]],
+  ENOB: [74],
+  NOISEFOLD: [4, 20],
+  DROOP: [25, 100, 'rz'],
+  COHERENT: [10, 100, 1024],
+  CYCLES: [10, 100, 1024],
+  CHAIN: [60, 90, 100, 25, [2, 2], 0.9, false],
+  TUNINGWORD: [25, 100, 32],
+  TUNED: [10, 100, 8],
 };

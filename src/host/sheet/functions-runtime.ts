@@ -4,13 +4,15 @@
 /** What a cell of an argument holds; an error in a cell comes as an object with its code. */
 export type Argument = (number | string | boolean | null | { code: string })[][];
 
-/** A worksheet function as the bundle registers it: rows of cells in (null for an argument left out), rows of cells out. */
-export type Implementation = (...args: (Argument | null)[]) => unknown[][];
+/** A worksheet function as the bundle registers it: rows of cells in (null for an argument left out), rows of cells out. A repeating parameter takes a list. */
+export type Implementation = (...args: (Argument | null | Argument[])[]) => unknown[][];
 
 export interface ParameterMetadata {
   name: string;
   description?: string;
   optional?: boolean;
+  /** Whether it takes all the arguments from its place on; only the last parameter may. */
+  repeating?: boolean;
 }
 
 export interface FunctionMetadata {
@@ -89,10 +91,10 @@ const ERROR_CODES = {
   invalidReference: '#REF!',
 } as const;
 
-/** Calls a function as a spreadsheet program does: what it throws is the result, a single error. */
-export function callFunction(implementation: Implementation, args: (Argument | null)[]): unknown[][] {
+/** Calls a function as a spreadsheet program does: what it throws is the result, a single error. Arguments missing at the end are left out. */
+export function callFunction(implementation: Implementation, parameters: ParameterMetadata[], args: (Argument | null)[]): unknown[][] {
   try {
-    return implementation(...args);
+    return implementation(...parameters.map(({ repeating }, i) => (repeating ? args.slice(i).filter((one) => one !== null) : args[i] ?? null)));
   } catch (error) {
     // Messages of other errors do not reach a cell in the spreadsheet either.
     return [[error instanceof FunctionError ? error : new FunctionError(ERROR_CODES.invalidValue)]];

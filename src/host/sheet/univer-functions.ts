@@ -33,7 +33,7 @@ export function univerFunctions({ metadata, implementations }: WorksheetFunction
 const formulaName = ({ name }: FunctionMetadata) => `${NAMESPACE}.${name}`;
 
 function functionClass(metadata: FunctionMetadata, implementation: Implementation, listener: Listener): typeof BaseFunction {
-  const most = metadata.parameters.length;
+  const most = metadata.parameters.at(-1)?.repeating ? Infinity : metadata.parameters.length;
   const least = metadata.parameters.filter(({ optional }) => !optional).length;
 
   return class extends BaseFunction {
@@ -43,7 +43,7 @@ function functionClass(metadata: FunctionMetadata, implementation: Implementatio
     override calculate(...given: FunctionVariantType[]): BaseValueObject {
       const rows = given.length < least || given.length > most
         ? [[wrongCount(metadata, least, most, given.length)]]
-        : callFunction(implementation, metadata.parameters.map((_, i) => (i < given.length ? argument(given[i]!) : null)));
+        : callFunction(implementation, metadata.parameters, given.map(argument));
       listener.heard?.(rows, this.row, this.column);
       return resultObject(rows);
     }
@@ -51,7 +51,7 @@ function functionClass(metadata: FunctionMetadata, implementation: Implementatio
 }
 
 function wrongCount(metadata: FunctionMetadata, least: number, most: number, given: number): FunctionError {
-  const accepted = least === most ? `${most}` : `${least} to ${most}`;
+  const accepted = least === most ? `${most}` : most === Infinity ? `${least} or more` : `${least} to ${most}`;
   return new FunctionError('#VALUE!', `${formulaName(metadata)} takes ${accepted} arguments; got ${given}.`);
 }
 
@@ -120,12 +120,12 @@ function description(metadata: FunctionMetadata): IFunctionInfo {
     functionType: FunctionType.User,
     description: metadata.description ?? '',
     abstract: metadata.description ?? '',
-    functionParameter: metadata.parameters.map(({ name, description, optional }) => ({
+    functionParameter: metadata.parameters.map(({ name, description, optional, repeating }) => ({
       name,
       detail: description ?? '',
       example: '',
       require: optional ? BooleanNumber.FALSE : BooleanNumber.TRUE,
-      repeat: BooleanNumber.FALSE,
+      repeat: repeating ? BooleanNumber.TRUE : BooleanNumber.FALSE,
     })),
   };
 }

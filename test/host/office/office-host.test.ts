@@ -219,5 +219,6 @@ const cell = (value: unknown): CellValue => (value instanceof FunctionError ? { 
 /** FOLD formulas of the model compute by the built functions. */
 function evaluate(...[name, args]: Parameters<Evaluate>): CellValue[][] {
   const given = args.map((rows) => rows && rows.map((row) => row.map((one) => (typeof one === 'object' && one ? { code: one.error } : one))));
-  return callFunction(built.implementations.get(name)!, given).map((row) => row.map(cell));
+  const { parameters } = built.metadata.find(({ id }) => id === name)!;
+  return callFunction(built.implementations.get(name)!, parameters, given).map((row) => row.map(cell));
 }

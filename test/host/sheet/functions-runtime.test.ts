@@ -9,10 +9,16 @@ const metadata = JSON.parse(built('functions.json')) as FunctionsMetadata;
 
 describe('the functions runtime', () => {
   const { implementations } = loadFunctions(metadata, built('functions.js'));
-  const call = (id: string, ...args: Parameters<typeof callFunction>[1]) => callFunction(implementations.get(id)!, args);
+  const call = (id: string, ...args: Parameters<typeof callFunction>[2]) =>
+    callFunction(implementations.get(id)!, metadata.functions.find((one) => one.id === id)!.parameters, args);
 
   it('runs the built functions, arguments left out as null', () => {
     expect(call('FREQ', [[70], [61.44]], [[100]], null)).toEqual([[30], [38.56]]);
+  });
+
+  it('gives a repeating parameter all that is left, without what is left out', () => {
+    expect(call('SUMSNR', [[70]])).toEqual([[70]]);
+    expect(call('SUMSNR', [[70], [70]], null, [['', 70, 70]])).toEqual(call('SUMSNR', [[70, 70], [70, 70]]));
   });
 
   it('gives an error in a row as an error of that row, with its sentence', () => {
@@ -28,7 +34,7 @@ describe('the functions runtime', () => {
     const broken = () => {
       throw new Error('not for the cell');
     };
-    expect(callFunction(broken, [])).toEqual([[new FunctionError('#VALUE!')]]);
+    expect(callFunction(broken, [], [])).toEqual([[new FunctionError('#VALUE!')]]);
   });
 
   it('refuses files that do not belong together', () => {
