@@ -32,7 +32,7 @@ const MOST_INTERVALS = 2_000_000;
  * @param from above 0
  * @param to not below from
  * @throws Fault where an argument is out of range, or there are more than two million intervals
- * @example forbiddenRates({ low: [120], high: [130], role: ['wanted'], guard: 0, harmonics: 1, cores: 1, sampling: 'real' }, 60, 90).low // => [80]
+ * @example forbiddenRates({ low: [120], high: [130], role: ['wanted'], guard: 0, harmonics: 1, cores: 1, sampling: 'real' }, 60, 90).low // => [80, 60]
  */
 export function forbiddenRates(plan: Plan, from: number, to: number, ppm = 0): ForbiddenRates {
   if (!(from > 0)) throw faults.notPositive('from', from);
