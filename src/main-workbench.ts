@@ -1,7 +1,7 @@
 // The workbench: the embedded sheet with the worksheet functions, the pane beside it, and files in and out.
 
 import './workbench/workbench.css';
-import { demoPlan, demoPlanName } from './demo-plan';
+import { demoFor } from './demo';
 import { HostFault, type Workbook } from './host/port';
 import { openEmbedded } from './host/sheet/embedded';
 import { type FunctionsMetadata, type WorksheetFunctions, createRuntime } from './host/sheet/functions-runtime';
@@ -14,8 +14,10 @@ import { sentences } from './workbench/sentences';
 
 const XLSX = 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet';
 
+const demo = demoFor(new URLSearchParams(location.search).get('demo'));
+
 /** The file that the sheet shows. */
-const current = { name: demoPlanName, unsaved: false };
+const current = { name: demo.name, unsaved: false };
 
 void start();
 
@@ -31,11 +33,11 @@ async function start(): Promise<void> {
     const dark = matchMedia('(prefers-color-scheme: dark)');
     const sheet = openEmbedded(await loadWorksheetFunctions(), page.sheet, dark.matches);
     dark.addEventListener('change', ({ matches }) => sheet.setDark(matches));
-    await sheet.host.load(demoPlan());
+    await sheet.host.load(demo.make());
     host = sheet.host;
-    host.onEdited(() => nameCurrent(page, current.name, true));
+    await host.onEdited(() => nameCurrent(page, current.name, true));
     followSelection(page, host);
-    nameCurrent(page, demoPlanName, false);
+    nameCurrent(page, demo.name, false);
     page.tell(sentences.welcome);
     page.busy(false);
   } catch {
@@ -124,6 +126,6 @@ function followSelection(page: Page, host: SheetHost): void {
     const failed = typeof value === 'object' && value !== null;
     page.showCell(failed ? '' : sentences.cell(cell.address, value), failed ? sentences.cellError(cell.address, value.error, value.message) : null);
   };
-  host.onSelected(() => void show());
+  void host.onSelected(() => void show());
   void host.onRecalculated(() => void show());
 }

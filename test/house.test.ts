@@ -18,8 +18,8 @@ const MAY_IMPORT: Record<string, readonly string[]> = {
   pane: ['engine', 'host/port'],
   help: [],
   workbench: [],
-  'demo-plan': ['host/port'],
-  main: ['engine', 'functions', 'host/port', 'host/office', 'host/sheet', 'host/file', 'pane', 'workbench', 'demo-plan'],
+  demo: ['host/port'],
+  main: ['engine', 'functions', 'host/port', 'host/office', 'host/sheet', 'host/file', 'pane', 'workbench', 'demo'],
 };
 
 /** The part that a source file belongs to; undefined for a file that knows no room. */

@@ -5,7 +5,8 @@ import { existsSync, mkdtempSync, readFileSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
 import { beforeAll, describe, expect, it } from 'vitest';
-import { demoPlan } from '../src/demo-plan';
+import { coastPlan } from '../src/demo/coast';
+import { frontEnd } from '../src/demo/front-end';
 import type { CellValue, Workbook } from '../src/host/port';
 import { readWorkbook, writeWorkbook } from '../src/host/file';
 import { calculate } from '../src/host/sheet/calculate';
@@ -25,7 +26,7 @@ const rowsOf = (table: string) => table.trim().split('\n').filter((line) => !/^[
 /** The demo plan with formulas on a sheet of their own, far apart, computed. */
 async function compute(formulas: readonly string[]): Promise<CellValue[][][]> {
   const APART = 50;
-  const workbook: Workbook = demoPlan();
+  const workbook: Workbook = coastPlan();
   workbook.sheets.push({
     name: 'README', columns: {}, rows: {}, merges: [], frozen: { rows: 0, columns: 0 },
     cells: Object.fromEntries(formulas.map((formula, i) => [i * APART, { 0: { value: null, formula } }])),
@@ -65,6 +66,32 @@ describe('the formulas of the README', () => {
   });
 });
 
+describe('the walk through the front end in the README', () => {
+  const cells = [...readme.matchAll(/^\| ([A-Z][\w ]+)!([A-Z]+)(\d+) \| `(=FOLD\.[^`]+)` \| (.+?) \|$/gm)]
+    .map(([, sheet, column, row, formula, result]) => ({ sheet: sheet!, column: column!, row: Number(row), formula: formula!, result: result! }));
+  let demo: Workbook;
+  beforeAll(async () => {
+    demo = await calculate(frontEnd(), built);
+  });
+
+  it('comes to every sheet of the demo', () => {
+    expect([...new Set(cells.map(({ sheet }) => sheet))]).toEqual(demo.sheets.map(({ name }) => name));
+  });
+
+  it.each(cells)('$sheet: $formula shows $result', ({ sheet, column, row, formula, result }) => {
+    const found = demo.sheets.find(({ name }) => name === sheet)!;
+    const { value } = found.cells[row - 1]![column.charCodeAt(0) - 65]!;
+    expect(shown(typeof value === 'number' ? Number(value.toPrecision(15)) : value)).toBe(result);
+    // The formula stands in that cell, or in one whose block holds it.
+    expect(Object.values(found.cells).flatMap((line) => Object.values(line)).map((cell) => cell.formula)).toContain(formula);
+  });
+
+  it('has no cell that is an error', () => {
+    const values = demo.sheets.flatMap((sheet) => Object.values(sheet.cells).flatMap((line) => Object.values(line).map(({ value }) => value)));
+    expect(values.filter((value) => typeof value === 'object' && value !== null)).toEqual([]);
+  });
+});
+
 describe('the function list of the README', () => {
   it('names every function with its arguments', () => {
     const listed = [...readme.matchAll(/^\| (`[A-Z]+\([^|]*) \|/gm)].flatMap(([, cell]) => [...cell!.matchAll(/`([A-Z]+)\((.*?)\)`/g)].map(([, id, args]) => [id!, args!] as const));
@@ -84,7 +111,7 @@ describe('the commands of the documents', () => {
   it('recalculate a plan', async () => {
     const [, line] = readme.match(/^npm run recalc -- (plan\.xlsx .*)$/m)!;
     const folder = mkdtempSync(path.join(tmpdir(), 'foldplan-'));
-    writeFileSync(path.join(folder, 'plan.xlsx'), await writeWorkbook(demoPlan()));
+    writeFileSync(path.join(folder, 'plan.xlsx'), await writeWorkbook(coastPlan()));
     execFileSync(process.execPath, [path.join(root, 'dist-cli/recalc.cjs'), ...line!.split(' ')], { cwd: folder, stdio: 'pipe' });
     const { workbook } = await readWorkbook(readFileSync(path.join(folder, 'done.xlsx')));
     const plan = workbook.sheets[0]!.cells;

@@ -4,7 +4,7 @@ import { afterEach, describe, expect, it } from 'vitest';
 import { openHeadless } from '../../../src/host/sheet/headless';
 import type { SheetHost } from '../../../src/host/sheet/sheet-host';
 import type { CellInput, Workbook } from '../../../src/host/port';
-import { demoPlan } from '../../../src/demo-plan';
+import { coastPlan } from '../../../src/demo/coast';
 import { built } from '../../support/built-functions';
 import { testHost } from '../../support/host-contract';
 import { planOf } from '../../support/workbook';
@@ -114,13 +114,13 @@ describe('the embedded sheet', () => {
   it('tells of edits, and not of recalculations', async () => {
     host = await open(planOf([[1, '=A1+1']]));
     let edits = 0;
-    const stop = host.onEdited(() => edits++);
+    const stop = await host.onEdited(() => edits++);
     await host.write('A1', [[2]]);
     const written = edits;
     await host.settled();
     expect(written).toBeGreaterThan(0);
     expect(edits).toBe(written);
-    stop();
+    await stop();
     await host.write('A1', [[3]]);
     expect(edits).toBe(written);
   });
@@ -210,8 +210,8 @@ describe('a workbook loaded into the embedded sheet and saved from it', () => {
   });
 
   it('is the demo plan and what it computes', async () => {
-    const once = await saved(demoPlan());
-    expect(once.names).toEqual(demoPlan().names);
+    const once = await saved(coastPlan());
+    expect(once.names).toEqual(coastPlan().names);
     expect(await saved(once)).toEqual(once);
     const errors = once.sheets.flatMap((sheet) => Object.values(sheet.cells).flatMap((line) => Object.values(line))).filter(({ value }) => typeof value === 'object' && value !== null);
     expect(errors).toEqual([]);

@@ -1,13 +1,12 @@
 // The plan that the workbench opens with: an invented observatory that listens to the coast with one converter. Its bands are public
 // allocations, in MHz.
 
-import type { Cell, Sheet, Style, Workbook } from './host/port';
+import type { Sheet, Workbook } from '../host/port';
+import { FREQUENCY, HEADER, INPUT, type Line, NOTE, NUMBER_HEADER, TITLE, blanks, formula, look, sheet, styled } from './cells';
 
-export const demoPlanName = 'Gannet Ness.xlsx';
-
-export function demoPlan(): Workbook {
+export function coastPlan(): Workbook {
   return {
-    sheets: [planSheet(), ratesSheet()],
+    sheets: [planSheet(), choiceSheet(), ratesSheet()],
     names: {
       Rate: 'Plan!$B$3',
       Guard: 'Plan!$B$4',
@@ -43,6 +42,8 @@ const SIGNALS: [name: string, low: number, high: number, role: 'wanted' | 'unwan
 const FIRST = 8;
 const LAST = FIRST + SIGNALS.length - 1;
 
+const SUBTITLE = { bold: true };
+
 const column = (letter: string) => `Plan!$${letter}$${FIRST}:$${letter}$${LAST}`;
 
 function planSheet(): Sheet {
@@ -65,7 +66,29 @@ function planSheet(): Sheet {
       formula(`=FOLD.MARGIN(${band},Guard,Ppm)`, FREQUENCY), formula(`=FOLD.CHECK(${band},Guard,Ppm)`),
     ];
   });
-  return sheet('Plan', lines, [176, 84, 84, 76, 92, 92, 48, 72, 76, 104], { rows: FIRST - 1, columns: 0 });
+  return sheet('Plan', lines, [176, 84, 84, 76, 100, 104, 52, 76, 80, 112], { rows: FIRST - 1, columns: 0 });
+}
+
+function choiceSheet(): Sheet {
+  const lines: Line[] = [];
+  lines[1] = [styled('Choosing a rate for the whole plan', TITLE)];
+  lines[2] = ['From', styled(60, INPUT), 'MHz'];
+  lines[3] = ['To', styled(1000, INPUT), 'MHz'];
+  lines[4] = ['Step of the clock', styled(5.12, INPUT), 'MHz'];
+  lines[6] = [
+    styled('What the rate cell breaks', SUBTITLE), ...blanks(4), styled('Usable ranges', SUBTITLE), ...blanks(5), styled('Best rates on the step', SUBTITLE),
+  ];
+  lines[7] = [
+    formula('=FOLD.CONFLICTS(Fold_Low,Fold_High,Rate,Fold_Role,Guard,Ppm,,,Fold_Name)', HEADER), ...blanks(4),
+    formula('=FOLD.PLANRATES(Fold_Low,Fold_High,Fold_Role,B2,B3,Guard,Ppm)', NUMBER_HEADER), ...blanks(5),
+    formula('=FOLD.RANKRATES(Fold_Low,Fold_High,B4,Fold_Role,B2,B3,Guard,Ppm,,,5)', NUMBER_HEADER),
+  ];
+  const made = sheet('Choosing a rate', lines, [144, 72, 128, 84, 28, 96, 96, 84, 96, 108, 28, 84, 108, 96, 196], { rows: 7, columns: 0 });
+  look(made, [6, 6], [1, 2, 14], HEADER);
+  look(made, [6, 6], [3, 6, 7, 8, 9, 12, 13], NUMBER_HEADER);
+  look(made, [7, 40], [3, 5, 6, 7, 8, 11, 13], FREQUENCY);
+  look(made, [7, 40], [9, 12], { numberFormat: '0.0' });
+  return made;
 }
 
 function ratesSheet(): Sheet {
@@ -75,40 +98,8 @@ function ratesSheet(): Sheet {
   lines[2] = ['From', styled(60, INPUT), 'MHz', ...blanks(3), 'Seen at', styled(3.55, INPUT), 'MHz'];
   lines[3] = ['To', styled(300, INPUT), 'MHz', ...blanks(3), 'Up to', styled(1000, INPUT), 'MHz'];
   lines[5] = [formula(`=FOLD.RATES(${airband},B2,B3,Guard,Ppm)`, NUMBER_HEADER), ...blanks(5), formula('=FOLD.IMAGES(H2,Rate,0,H3)', NUMBER_HEADER)];
-  const listed = sheet('Rates and images', lines, [92, 100, 100, 84, 72, 40, 92, 84, 72], { rows: 5, columns: 0 });
-  for (const [first, count] of [[1, 4], [7, 2]] as const) for (let c = first; c < first + count; c++) put(listed, 4, c, { value: null, style: NUMBER_HEADER });
-  for (let r = 5; r < 30; r++) for (const c of [1, 2, 3, 6]) put(listed, r, c, { value: null, style: FREQUENCY });
-  return listed;
-}
-
-// Cells
-
-type Line = (string | number | null | Cell)[];
-
-const FREQUENCY: Style = { numberFormat: '0.0000' };
-const TITLE: Style = { bold: true, fontSize: 14 };
-const NOTE: Style = { italic: true, color: '#5c6670' };
-const INPUT: Style = { fill: '#fff6dc', border: { bottom: { style: 'thin', color: '#b8860b' } } };
-const HEADER: Style = { bold: true, fill: '#dfe9ee', border: { bottom: { style: 'thin', color: '#41616f' } } };
-const NUMBER_HEADER: Style = { ...HEADER, horizontal: 'right' };
-
-const styled = (value: string | number, style: Style): Cell => ({ value, style });
-
-const formula = (text: string, style?: Style): Cell => ({ value: null, formula: text, ...(style && { style }) });
-
-const blanks = (count: number): null[] => new Array<null>(count).fill(null);
-
-/** @param lines by row as the sheet counts, from 1 */
-function sheet(name: string, lines: Line[], widths: number[], frozen: Sheet['frozen']): Sheet {
-  const made: Sheet = {
-    name, cells: {}, columns: Object.fromEntries(widths.map((width, i) => [i, { width }])), rows: { 0: { height: 28 } }, merges: [], frozen,
-  };
-  lines.forEach((line, row) => line.forEach((cell, c) => {
-    if (cell !== null) put(made, row - 1, c, typeof cell === 'object' ? cell : { value: cell });
-  }));
+  const made = sheet('Rates and images', lines, [92, 100, 100, 84, 72, 40, 92, 84, 72], { rows: 5, columns: 0 });
+  look(made, [4, 4], [1, 2, 3, 4, 7, 8], NUMBER_HEADER);
+  look(made, [5, 29], [1, 2, 3, 6], FREQUENCY);
   return made;
 }
-
-const put = (target: Sheet, row: number, column: number, cell: Cell): void => {
-  (target.cells[row] ??= {})[column] = cell;
-};
