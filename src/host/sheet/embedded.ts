@@ -1,10 +1,16 @@
 // The embedded sheet with its window: cells, formula bar and tabs inside an element of a page.
 
-import { LocaleType, LogLevel, ThemeService, Univer } from '@univerjs/core';
+import { LocaleType, LogLevel, ThemeService, Univer, mergeLocales } from '@univerjs/core';
 import { LexerTreeBuilder } from '@univerjs/engine-formula';
+import { UniverSheetsConditionalFormattingPreset } from '@univerjs/preset-sheets-conditional-formatting';
+import marksEnUS from '@univerjs/preset-sheets-conditional-formatting/locales/en-US';
+import '@univerjs/preset-sheets-conditional-formatting/lib/index.css';
 import { UniverSheetsCorePreset } from '@univerjs/preset-sheets-core';
 import enUS from '@univerjs/preset-sheets-core/locales/en-US';
 import '@univerjs/preset-sheets-core/lib/index.css';
+import { UniverSheetsNotePreset } from '@univerjs/preset-sheets-note';
+import notesEnUS from '@univerjs/preset-sheets-note/locales/en-US';
+import '@univerjs/preset-sheets-note/lib/index.css';
 import { CalculationMode } from '@univerjs/sheets-formula';
 import { defaultTheme } from '@univerjs/themes';
 import { FormulaLexer } from './formula-lexer';
@@ -22,7 +28,7 @@ export function openEmbedded(functions: WorksheetFunctions, container: HTMLEleme
   const listener: Listener = { heard: null };
   const { classes, descriptions } = univerFunctions(functions, listener);
   const univer = new Univer({
-    theme: defaultTheme, darkMode: dark, locale: LocaleType.EN_US, locales: { [LocaleType.EN_US]: enUS }, logLevel: LogLevel.SILENT,
+    theme: defaultTheme, darkMode: dark, locale: LocaleType.EN_US, locales: { [LocaleType.EN_US]: mergeLocales(enUS, notesEnUS, marksEnUS) }, logLevel: LogLevel.SILENT,
   });
   const preset = UniverSheetsCorePreset({
     container,
@@ -30,7 +36,7 @@ export function openEmbedded(functions: WorksheetFunctions, container: HTMLEleme
     footer: { statisticBar: false, menus: false, zoomSlider: false },
     formula: { function: classes, description: descriptions, initialFormulaComputing: CalculationMode.FORCED },
   });
-  for (const plugin of preset.plugins) {
+  for (const plugin of [preset, UniverSheetsNotePreset(), UniverSheetsConditionalFormattingPreset()].flatMap(({ plugins }) => plugins)) {
     if (Array.isArray(plugin)) univer.registerPlugin(plugin[0], plugin[1]);
     else univer.registerPlugin(plugin);
   }

@@ -3,7 +3,9 @@
 import { LocaleType, LogLevel, Univer } from '@univerjs/core';
 import { LexerTreeBuilder, UniverFormulaEnginePlugin } from '@univerjs/engine-formula';
 import { UniverSheetsPlugin } from '@univerjs/sheets';
+import { UniverSheetsConditionalFormattingPlugin } from '@univerjs/sheets-conditional-formatting';
 import { CalculationMode, UniverSheetsFormulaPlugin } from '@univerjs/sheets-formula';
+import { UniverSheetsNotePlugin } from '@univerjs/sheets-note';
 import { FormulaLexer } from './formula-lexer';
 import type { WorksheetFunctions } from './functions-runtime';
 import { SheetHost } from './sheet-host';
@@ -15,6 +17,8 @@ export function openHeadless(functions: WorksheetFunctions): SheetHost {
   univer.registerPlugin(UniverFormulaEnginePlugin, { function: univerFunctions(functions, listener).classes });
   univer.registerPlugin(UniverSheetsPlugin);
   univer.registerPlugin(UniverSheetsFormulaPlugin, { initialFormulaComputing: CalculationMode.FORCED });
+  univer.registerPlugin(UniverSheetsNotePlugin);
+  univer.registerPlugin(UniverSheetsConditionalFormattingPlugin);
   univer.__getInjector().replace([LexerTreeBuilder, { useClass: FormulaLexer }]);
   return new SheetHost(univer, listener);
 }

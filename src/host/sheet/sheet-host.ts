@@ -1,22 +1,27 @@
 // The port over a live workbook of the embedded sheet, with a window or without.
 
 import {
-  type ICellData, type IDisposable, type Univer, type Workbook as UniverWorkbook, type Worksheet, ICommandService, IUndoRedoService,
-  IUniverInstanceService, UniverInstanceType, generateRandomId,
+  type IRange, type Univer, type Workbook as UniverWorkbook, type Worksheet, ICommandService, IUniverInstanceService, UniverInstanceType, generateRandomId,
 } from '@univerjs/core';
-import { FORMULA_REF_TO_ARRAY_CACHE, FormulaDataModel, ICalculateFormulaService, IDefinedNamesService } from '@univerjs/engine-formula';
-import { SetRangeValuesCommand, SetWorksheetColumnCountCommand, SetWorksheetRowCountCommand, SheetsSelectionsService } from '@univerjs/sheets';
+import { FormulaDataModel } from '@univerjs/engine-formula';
+import {
+  ScrollToCellOperation, SelectionMoveType, SetSelectionsOperation, SetWorksheetActiveOperation, SheetsSelectionsService, getPrimaryForRange,
+} from '@univerjs/sheets';
 import { FormulaCalculationSessionService } from '@univerjs/sheets-formula';
-import { type Block, type CellError, type CellInput, type CellValue, type Host, type Workbook, HostFault } from '../port';
-import { type CellRange, formatCell, formatRange, parseReference } from './address';
-import { cellData, plainValue } from './cell-values';
-import { FunctionError, NAMESPACE } from './functions-runtime';
+import type { Block, CellError, CellInput, CellValue, Change, FormulaBlock, LiveHost, Place, Table, Workbook } from '../port';
+import { type CellRange, formatRange } from './address';
+import { makeChange } from './changes';
+import { type PlacedError, type PlacedSentence, errorSentences } from './error-sentences';
+import { type Found, OpenWorkbook } from './open-workbook';
 import { Recalculation } from './recalculation';
+import { cannotAddPicture, faults } from './sheet-faults';
 import type { Listener } from './univer-functions';
-import { formulaAt, fromWorkbook, spills, toWorkbookData } from './workbook-data';
+import { fromWorkbook, toWorkbookData } from './workbook-data';
 
-export class SheetHost implements Host {
-  private workbook: UniverWorkbook | null = null;
+export class SheetHost implements LiveHost {
+  readonly cannot = { addPicture: cannotAddPicture };
+
+  private workbook: OpenWorkbook | null = null;
   private calculation: Recalculation | null = null;
 
   /**
@@ -25,35 +30,92 @@ export class SheetHost implements Host {
    */
   constructor(readonly univer: Univer, private readonly listener: Listener) {}
 
-  // The port
+  // What is there
 
   async read(reference: string): Promise<Block | null> {
-    const place = this.find(reference);
-    return place && this.readCells(place.sheet, place.range);
+    const found = this.open.find(reference);
+    return found && this.block(found);
   }
 
-  async write(reference: string, cells: CellInput[][]): Promise<void> {
-    const place = this.find(reference);
-    if (!place) throw new HostFault(`The workbook has no name, sheet or cells called ${reference}.`);
-    const { sheet, range } = place;
-    const rows = range.endRow - range.startRow + 1;
-    const columns = range.endColumn - range.startColumn + 1;
-    const other = cells.find((row) => row.length !== columns);
-    if (cells.length !== rows || other) {
-      throw new HostFault(`${reference} has ${rows} × ${columns} cells; got ${cells.length} × ${other?.length ?? cells[0]?.length ?? 0}.`);
-    }
-    const target = { unitId: sheet.getUnitId(), subUnitId: sheet.getSheetId() };
-    this.inOneStep(() => {
-      if (range.endRow >= sheet.getRowCount()) this.run(SetWorksheetRowCountCommand.id, { ...target, rowCount: range.endRow + 1 });
-      if (range.endColumn >= sheet.getColumnCount()) this.run(SetWorksheetColumnCountCommand.id, { ...target, columnCount: range.endColumn + 1 });
-      this.run(SetRangeValuesCommand.id, { ...target, range, value: cells.map((row) => row.map(inputData)) });
+  async formulas(reference: string): Promise<FormulaBlock | null> {
+    const found = this.open.find(reference);
+    return found && { ...placeOf(found), formulas: this.open.formulasOf(found) };
+  }
+
+  async surroundings(reference: string): Promise<Block | null> {
+    const found = this.open.find(reference);
+    const range = found && this.open.surroundings(found);
+    return range && this.block({ sheet: found.sheet, range });
+  }
+
+  async sheets(): Promise<Place[]> {
+    return this.open.sheets.map((sheet) => {
+      const range = this.open.used(sheet);
+      return range ? placeOf({ sheet, range }) : { sheet: sheet.getName(), address: '' };
     });
+  }
+
+  async tables(): Promise<Table[]> {
+    return [];
+  }
+
+  async names(): Promise<Record<string, string>> {
+    return Object.fromEntries(this.open.names().map(({ name, refersTo }) => [name, refersTo]));
+  }
+
+  // What the user is at
+
+  async selection(): Promise<Place | null> {
+    const range = this.get(SheetsSelectionsService).getCurrentLastSelection()?.range;
+    const sheet = this.open.unit.getActiveSheet();
+    return range ? placeOf({ sheet, range: withinSheet(sheet, range) }) : null;
+  }
+
+  async select(reference: string): Promise<void> {
+    const found = this.open.find(reference);
+    if (!found) throw faults.unknown(reference);
+    const { sheet, range } = found;
+    const target = { unitId: this.open.id, subUnitId: sheet.getSheetId() };
+    const commands = this.get(ICommandService);
+    commands.syncExecuteCommand(SetWorksheetActiveOperation.id, target);
+    commands.syncExecuteCommand(SetSelectionsOperation.id, {
+      ...target, selections: [{ range, primary: getPrimaryForRange(range, sheet), style: null }], type: SelectionMoveType.MOVE_END,
+    });
+    commands.syncExecuteCommand(ScrollToCellOperation.id, { ...target, range });
+  }
+
+  async onSelected(listener: () => void): Promise<() => Promise<void>> {
+    const subscription = this.get(SheetsSelectionsService).selectionChanged$.subscribe(() => listener());
+    return async () => subscription.unsubscribe();
+  }
+
+  async onEdited(listener: () => void): Promise<() => Promise<void>> {
+    const stop = this.followEdits(listener);
+    return async () => stop();
   }
 
   async onRecalculated(listener: () => void): Promise<() => Promise<void>> {
     const stop = this.recalculation.onDone(listener);
     return async () => stop();
   }
+
+  // Changes
+
+  async write(reference: string, cells: CellInput[][]): Promise<void> {
+    makeChange(this.open, { cells: [{ reference, cells }] });
+  }
+
+  async change(change: Change): Promise<() => Promise<void>> {
+    const undo = makeChange(this.open, change);
+    return async () => undo();
+  }
+
+  async addPicture(): Promise<void> {
+    throw faults.noPictures();
+  }
+
+  /** The functions are part of the workbench. */
+  async startWithWorkbook(): Promise<void> {}
 
   // The workbook as a whole
 
@@ -65,9 +127,10 @@ export class SheetHost implements Host {
     const data = toWorkbookData(workbook, generateRandomId());
     if (this.workbook) {
       await this.recalculation.idle(); // of a workbook that is gone, nothing can be computed
-      this.get(IUniverInstanceService).disposeUnit(this.workbook.getUnitId());
+      this.get(IUniverInstanceService).disposeUnit(this.workbook.id);
     }
-    this.workbook = this.univer.createUnit<object, UniverWorkbook>(UniverInstanceType.UNIVER_SHEET, data);
+    const unit = this.univer.createUnit<object, UniverWorkbook>(UniverInstanceType.UNIVER_SHEET, data);
+    this.workbook = new OpenWorkbook(unit, this.univer.__getInjector());
     this.recalculation.opened();
     const stop = this.recalculation.onProgress(onProgress);
     await this.settled();
@@ -75,7 +138,7 @@ export class SheetHost implements Host {
   }
 
   save(): Workbook {
-    return fromWorkbook(this.open, this.get(FormulaDataModel), this.get(IDefinedNamesService));
+    return fromWorkbook(this.open);
   }
 
   /** Resolves when nothing is left to compute. */
@@ -83,35 +146,20 @@ export class SheetHost implements Host {
     return this.recalculation.settled();
   }
 
-  /** Calls `listener` after every change that a user or a write makes, until the returned function is called. */
-  onEdited(listener: () => void): () => void {
-    const subscription = this.get(ICommandService).onMutationExecutedForCollab(({ params }, options) => {
-      const ofWorkbook = (params as { unitId?: string } | undefined)?.unitId === this.open.getUnitId(); // not of the text in the cell editor
-      if (ofWorkbook && !options?.onlyLocal) listener(); // results of formulas stay local
-    });
-    return () => subscription.dispose();
-  }
-
-  /** Calls `listener` after another cell is selected, until the returned function is called. */
-  onSelected(listener: () => void): () => void {
-    const subscription = this.get(SheetsSelectionsService).selectionChanged$.subscribe(() => listener());
-    return () => subscription.unsubscribe();
-  }
-
   /** The cell that the user is at, as the port reads it; null where there is none. */
   selectedCell(): Promise<Block | null> {
     const primary = this.get(SheetsSelectionsService).getCurrentLastSelection()?.primary;
     if (!primary) return Promise.resolve(null);
     const { actualRow: row, actualColumn: column } = primary;
-    return this.readCells(this.open.getActiveSheet(), { startRow: row, endRow: row, startColumn: column, endColumn: column });
+    return this.block({ sheet: this.open.unit.getActiveSheet(), range: { startRow: row, endRow: row, startColumn: column, endColumn: column } });
   }
 
   /** Sentences behind the errors of cells of a sheet, for those that a function of ours gave. */
   async sentencesOf(sheetName: string, cells: { row: number; column: number }[]): Promise<PlacedSentence[]> {
-    const sheet = this.sheetNamed(sheetName);
+    const sheet = this.open.sheetNamed(sheetName);
     if (!sheet) return [];
     return this.sentences(sheet, cells.flatMap(({ row, column }) => {
-      const [[value]] = this.values(sheet, { startRow: row, endRow: row, startColumn: column, endColumn: column }) as [[CellValue]];
+      const [[value]] = this.open.values({ sheet, range: { startRow: row, endRow: row, startColumn: column, endColumn: column } }) as [[CellValue]];
       return isError(value) ? [{ row, column, code: value.error }] : [];
     }));
   }
@@ -120,96 +168,41 @@ export class SheetHost implements Host {
     this.univer.dispose();
   }
 
-  // Reading
+  // Below the port
 
-  private get open(): UniverWorkbook {
+  private get open(): OpenWorkbook {
     if (!this.workbook) throw new Error('No workbook is loaded.');
     return this.workbook;
   }
 
-  private async readCells(sheet: Worksheet, range: CellRange): Promise<Block> {
-    const values = this.values(sheet, range);
-    const sentences = await this.sentences(sheet, errorsIn(values, range));
-    for (const { row, column, sentence } of sentences) (values[row - range.startRow]![column - range.startColumn] as CellError).message = sentence;
-    return { sheet: sheet.getName(), address: formatRange(range), values };
+  private async block(found: Found): Promise<Block> {
+    const values = this.open.values(found);
+    const { startRow, startColumn } = found.range;
+    const sentences = await this.sentences(found.sheet, errorsIn(values, found.range));
+    for (const { row, column, sentence } of sentences) (values[row - startRow]![column - startColumn] as CellError).message = sentence;
+    return { ...placeOf(found), values };
   }
 
-  private find(reference: string): { sheet: Worksheet; range: CellRange } | null {
-    const named = this.get(IDefinedNamesService).getValueByName(this.open.getUnitId(), reference.trim());
-    const parsed = parseReference(named ? named.formulaOrRefString.replace(/^=/, '') : reference);
-    if (!parsed || (named && parsed.sheet === null)) return null;
-    const sheet = parsed.sheet === null ? this.open.getActiveSheet() : this.sheetNamed(parsed.sheet);
-    return sheet ? { sheet, range: parsed.range } : null;
-  }
-
-  private sheetNamed(name: string): Worksheet | undefined {
-    return this.open.getSheets().find((sheet) => sheet.getName().toLowerCase() === name.toLowerCase());
-  }
-
-  private values(sheet: Worksheet, range: CellRange): CellValue[][] {
-    const cells = sheet.getCellMatrix();
-    const spilled = this.get(FormulaDataModel).getArrayFormulaCellData()?.[sheet.getUnitId()]?.[sheet.getSheetId()];
-    const rows: CellValue[][] = [];
-    for (let r = range.startRow; r <= range.endRow; r++) {
-      const row: CellValue[] = [];
-      for (let c = range.startColumn; c <= range.endColumn; c++) {
-        const own = cells.getValue(r, c);
-        row.push(own?.f || own?.si ? plainValue(own) : plainValue(own) ?? plainValue(spilled?.[r]?.[c]));
-      }
-      rows.push(row);
-    }
-    return rows;
-  }
-
-  /**
-   * The sheet keeps only the codes of errors, so the formulas behind them are computed once more while someone listens: what is told is
-   * always what the formula says now.
-   */
   private async sentences(sheet: Worksheet, errors: PlacedError[]): Promise<PlacedSentence[]> {
     if (errors.length === 0) return [];
     await this.recalculation.idle();
-    const formulas = this.get(FormulaDataModel);
-    const blocks = spills(sheet, formulas);
-    const anchored = errors.map((error) => {
-      const block = blocks.find((one) => holds(one, error));
-      return { ...error, anchorRow: block?.startRow ?? error.row, anchorColumn: block?.startColumn ?? error.column };
-    });
-    const behind: Record<number, Record<number, string[]>> = {};
-    for (const { anchorRow, anchorColumn } of anchored) {
-      const formula = formulaAt(sheet, formulas, anchorRow, anchorColumn);
-      if (formula?.toUpperCase().includes(`${NAMESPACE}.`)) (behind[anchorRow] ??= {})[anchorColumn] = [formula];
-    }
-    const heard = await this.listenTo(sheet, behind);
-    return anchored.flatMap(({ row, column, code, anchorRow, anchorColumn }) => {
-      const sentence = sentenceFor(code, heard.get(formatCell(anchorRow, anchorColumn)) ?? [], row - anchorRow, column - anchorColumn);
-      return sentence === undefined ? [] : [{ row, column, sentence }];
-    });
+    return errorSentences(this.open, this.listener, sheet, errors);
   }
 
-  /** What our functions return while formulas are computed, by cell, in the order in which they do. */
-  private async listenTo(sheet: Worksheet, formulas: Record<number, Record<number, string[]>>): Promise<Map<string, unknown[][][]>> {
-    const heard = new Map<string, unknown[][][]>();
-    this.listener.heard = (rows, row, column) => {
-      const cell = formatCell(row, column);
-      heard.set(cell, [...heard.get(cell) ?? [], rows]);
-    };
-    try {
-      await this.get(ICalculateFormulaService).executeFormulas({ [sheet.getUnitId()]: { [sheet.getSheetId()]: formulas } });
-    } finally {
-      this.listener.heard = null;
-      FORMULA_REF_TO_ARRAY_CACHE.clear(); // else the next recalculation would find the values of this one
-    }
-    return heard;
+  private followEdits(listener: () => void): () => void {
+    const subscription = this.get(ICommandService).onMutationExecutedForCollab(({ params }, options) => {
+      const ofWorkbook = (params as { unitId?: string } | undefined)?.unitId === this.open.id; // not of the text in the cell editor
+      if (ofWorkbook && !options?.onlyLocal) listener(); // results of formulas stay local
+    });
+    return () => subscription.dispose();
   }
-
-  // Univer's services
 
   /** Univer's services for sheets exist once there is a sheet. */
   private get recalculation(): Recalculation {
     if (!this.calculation) {
       const calculation = new Recalculation(this.get(FormulaCalculationSessionService), this.get(FormulaDataModel), this.get(ICommandService));
       this.calculation = calculation;
-      this.onEdited(() => calculation.changed());
+      this.followEdits(() => calculation.changed());
     }
     return this.calculation;
   }
@@ -218,53 +211,20 @@ export class SheetHost implements Host {
     const injector = this.univer.__getInjector();
     return injector.get.bind(injector);
   }
-
-  private run(command: string, params: object): void {
-    if (!this.get(ICommandService).syncExecuteCommand(command, params)) throw new HostFault('The sheet did not accept the cells.');
-  }
-
-  private inOneStep(change: () => void): void {
-    const batch: IDisposable = this.get(IUndoRedoService).__tempBatchingUndoRedo(this.open.getUnitId());
-    try {
-      change();
-    } finally {
-      batch.dispose();
-    }
-  }
 }
 
-interface PlacedError {
-  row: number;
-  column: number;
-  code: string;
-}
+const placeOf = ({ sheet, range }: Found): Place => ({ sheet: sheet.getName(), address: formatRange(range) });
 
-export interface PlacedSentence {
-  row: number;
-  column: number;
-  sentence: string;
+/** Of whole rows and columns, the sheet leaves out where they end. */
+function withinSheet(sheet: Worksheet, { startRow, startColumn, endRow, endColumn }: Readonly<IRange>): CellRange {
+  const known = (index: number, otherwise: number) => (Number.isNaN(index) ? otherwise : index);
+  return {
+    startRow: known(startRow, 0), startColumn: known(startColumn, 0), endRow: known(endRow, sheet.getRowCount() - 1), endColumn: known(endColumn, sheet.getColumnCount() - 1),
+  };
 }
 
 const isError = (value: CellValue): value is CellError => typeof value === 'object' && value !== null;
 
 function errorsIn(values: CellValue[][], { startRow, startColumn }: CellRange): PlacedError[] {
   return values.flatMap((line, r) => line.flatMap((value, c) => (isError(value) ? [{ row: startRow + r, column: startColumn + c, code: value.error }] : [])));
-}
-
-const holds = (range: CellRange, { row, column }: { row: number; column: number }): boolean =>
-  row >= range.startRow && row <= range.endRow && column >= range.startColumn && column <= range.endColumn;
-
-/** The last function called is the outermost; one inside may have given the error that it passed on. */
-function sentenceFor(code: string, heard: unknown[][][], row: number, column: number): string | undefined {
-  for (const rows of heard.toReversed()) {
-    const cell = rows.length === 1 && rows[0]!.length === 1 ? rows[0]![0] : rows[row]?.[column];
-    if (cell instanceof FunctionError && cell.code === code && cell.message) return cell.message;
-  }
-  return undefined;
-}
-
-function inputData(input: CellInput): ICellData {
-  const empty = { f: null, si: null, p: null };
-  if (typeof input === 'object' && input !== null) return { ...empty, f: input.formula, v: null };
-  return { ...empty, ...cellData(input === '' ? null : input) };
 }

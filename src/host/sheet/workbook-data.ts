@@ -1,12 +1,14 @@
 // A workbook as plain data and as the embedded sheet keeps it.
 
 import {
-  type ICellData, type IStyleData, type IWorkbookData, type IWorksheetData, type Workbook as UniverWorkbook, type Worksheet, BooleanNumber, LocaleType,
+  type ICellData, type IStyleData, type IWorkbookData, type IWorksheetData, type Worksheet, BooleanNumber, LocaleType,
 } from '@univerjs/core';
-import type { FormulaDataModel, IDefinedNamesService } from '@univerjs/engine-formula';
+import { FormulaDataModel } from '@univerjs/engine-formula';
 import type { Cell, Sheet, Style, Workbook } from '../port';
 import { type CellRange, formatRange, parseReference } from './address';
 import { cellData, plainValue } from './cell-values';
+import { notesAndMarksData, plainNotesAndMarks } from './notes-and-marks';
+import type { OpenWorkbook } from './open-workbook';
 import { fromStyleData, toStyleData } from './style-data';
 
 const DEFAULT_WIDTH = 64;
@@ -16,7 +18,7 @@ const SPARE_ROWS = 10_240;
 const SPARE_COLUMNS = 26;
 
 /** Names that the sheet keeps for a whole workbook. */
-const WHOLE_WORKBOOK = 'AllDefaultWorkbook';
+export const WHOLE_WORKBOOK = 'AllDefaultWorkbook';
 const NAMES_RESOURCE = 'SHEET_DEFINED_NAME_PLUGIN';
 
 // In
@@ -36,8 +38,27 @@ export function toWorkbookData(workbook: Workbook, id: string): IWorkbookData {
     styles: styles.data,
     sheetOrder: sheets.map((sheet) => sheet.id!),
     sheets: Object.fromEntries(sheets.map((sheet) => [sheet.id!, sheet])),
-    resources: [{ name: NAMES_RESOURCE, data: JSON.stringify(Object.fromEntries(names.map((name) => [name.id, name]))) }],
+    resources: [
+      { name: NAMES_RESOURCE, data: JSON.stringify(Object.fromEntries(names.map((name) => [name.id, name]))) },
+      ...notesAndMarksData(workbook.sheets.map((sheet, i) => [sheets[i]!.id!, sheet])),
+    ],
   };
+}
+
+export const blankSheet = (id: string, name: string): Partial<IWorksheetData> =>
+  worksheetData({ name, cells: {}, columns: {}, rows: {}, merges: [], frozen: { rows: 0, columns: 0 } }, id, new StyleTable());
+
+/** A sheet of the same workbook with all that is in the cells and about them. */
+export function copyOfSheet({ injector }: OpenWorkbook, original: Worksheet, id: string, name: string): Partial<IWorksheetData> {
+  const copy = structuredClone(original.getConfig());
+  const formulas = injector.get(FormulaDataModel);
+  for (const [row, line] of Object.entries(copy.cellData)) {
+    for (const [column, cell] of Object.entries(line as Record<string, ICellData>)) {
+      const formula = formulaAt(original, formulas, Number(row), Number(column));
+      if (formula) Object.assign(cell, { f: formula, si: null }); // cells may share one formula
+    }
+  }
+  return { ...copy, id, name };
 }
 
 function worksheetData(sheet: Sheet, id: string, styles: StyleTable): Partial<IWorksheetData> {
@@ -107,25 +128,25 @@ function mapIndexed<A, B>(entries: Record<number, A>, change: (entry: A) => B): 
 
 // Out
 
-export function fromWorkbook(workbook: UniverWorkbook, formulas: FormulaDataModel, names: IDefinedNamesService): Workbook {
+export function fromWorkbook(workbook: OpenWorkbook): Workbook {
   return {
-    sheets: workbook.getSheets().map((sheet) => plainSheet(sheet, formulas)),
-    names: Object.fromEntries(Object.values(names.getDefinedNameMap(workbook.getUnitId()) ?? {})
-      .map(({ name, formulaOrRefString }) => [name, formulaOrRefString.replace(/^=/, '')])),
+    sheets: workbook.sheets.map((sheet) => plainSheet(workbook, sheet)),
+    names: Object.fromEntries(workbook.names().map(({ name, refersTo }) => [name, refersTo])),
   };
 }
 
-function plainSheet(sheet: Worksheet, formulas: FormulaDataModel): Sheet {
+function plainSheet(workbook: OpenWorkbook, sheet: Worksheet): Sheet {
   const config = sheet.getConfig();
   const { xSplit, ySplit } = sheet.getFreeze();
   return {
     name: sheet.getName(),
-    cells: plainCells(sheet, formulas),
+    cells: plainCells(sheet, workbook.injector.get(FormulaDataModel)),
     columns: filterIndexed(config.columnData, ({ w, hd }) => ({ ...(w !== undefined && { width: w }), ...(hd && { hidden: true }) })),
     // A height that the sheet found for itself is no wish of the user.
     rows: filterIndexed(config.rowData, ({ h, ia, hd }) => ({ ...(ia === BooleanNumber.FALSE && { height: h }), ...(hd && { hidden: true }) })),
     merges: sheet.getMergeData().map(formatRange),
     frozen: { rows: Math.max(ySplit, 0), columns: Math.max(xSplit, 0) },
+    ...plainNotesAndMarks(workbook, sheet),
   };
 }
 
