@@ -10,6 +10,7 @@ import { type Plan, readPlan } from './plan';
 import { sentences } from './sentences';
 import { slot } from './slot';
 import { stepThroughBands } from './ladder/stepping';
+import { WHOLE } from './ladder/view';
 import { headline } from './words';
 
 /** Recalculations within this many milliseconds are read once. */
@@ -27,7 +28,7 @@ export async function mountPane(host: Host, root: HTMLElement): Promise<() => vo
   const glance = slot(document, 'glance');
   const picture = slot(document, 'picture');
   const figures = slot(document, 'rows');
-  const stepping = stepThroughBands(document, picture.place);
+  const stepping = stepThroughBands(document, picture.place, () => {});
   root.classList.add('foldplan');
   root.replaceChildren(faults.place, notices.place, glance.place, stepping.readout, picture.place, figures.place);
 
@@ -37,7 +38,8 @@ export async function mountPane(host: Host, root: HTMLElement): Promise<() => vo
   function draw(): void {
     const able = drawn !== null && drawn.bands.length > 0 ? drawn : null;
     const words = able && headline(able);
-    picture.show(able ? [ladderPicture(ladderLayout(able, width), words!.verdict)] : []);
+    const layout = able && ladderLayout(able, width, WHOLE);
+    picture.show(layout ? [ladderPicture(layout, words!.verdict)] : []);
     stepping.renew();
   }
 

@@ -11,7 +11,9 @@ export interface Frame {
   rate: number;
   /** Half the rate. */
   half: number;
-  /** Where 0 and half the rate stand. */
+  /** The stretch of the folded axis that is shown, 0 ≤ low < high ≤ half, and where its ends stand. */
+  low: number;
+  high: number;
   left: number;
   right: number;
   /** Width of the marks with the numbers of the zones. */
@@ -30,6 +32,21 @@ export interface Text {
   width: number;
   size: number;
 }
+
+/** A text or a label as the rectangle that it fills. */
+export function boxOf({ x, y, anchor, width, size }: Pick<Text, 'x' | 'y' | 'anchor' | 'width' | 'size'>): Box {
+  const left = x - { start: 0, middle: width / 2, end: width }[anchor];
+  return { left, right: left + width, top: y - size / 2, bottom: y + size / 2 };
+}
+
+export interface Box {
+  left: number;
+  right: number;
+  top: number;
+  bottom: number;
+}
+
+export const collide = (a: Box, b: Box): boolean => a.left < b.right && b.left < a.right && a.top < b.bottom && b.top < a.bottom;
 
 export interface BarShape {
   x: number;
@@ -63,34 +80,44 @@ const NARROWEST_BAR = 2;
 const WIDEST_MARK = 44;
 
 /** The frame of a picture whose rungs are these zones. The fewer digits the ends of the rungs need, the more room is left to the axis. */
-export function frameOf(zones: number[], rate: number, width: number): Frame {
-  const half = Number((rate / 2).toPrecision(15));
+export function frameOf(zones: number[], rate: number, { low, high }: Stretch, width: number): Frame {
+  const half = halfOf(rate);
   const writer = figureWriter(half);
   const markWidth = Math.max(18, ...zones.map((zone) => Math.min(WIDEST_MARK, textWidth(String(zone), SMALL) + 8)));
   for (let digits = 7; ; digits--) {
     const write = (frequency: number) => writer(frequency, digits);
     const widest = (ends: number[]) => Math.max(...ends.map((end) => textWidth(write(end), SMALL)));
-    const leftEnds = widest(zones.map((zone) => edgeAt('left', zone, rate)));
-    const rightEnds = widest([half, ...zones.map((zone) => edgeAt('right', zone, rate))]);
+    const leftEnds = widest(zones.map((zone) => trueFrequency(zone, low, rate)));
+    const rightEnds = widest([high, ...zones.map((zone) => trueFrequency(zone, high, rate))]);
     const left = PAD + markWidth + 6 + leftEnds + 3 + SWING;
     const right = width - PAD - rightEnds - 3 - SWING;
-    if (right - left >= width * 0.55 || digits === 4) return { width, rate, half, left, right, markWidth, write };
+    if (right - left >= width * 0.55 || digits === 4) return { width, rate, half, low, high, left, right, markWidth, write };
   }
 }
 
-/** The true frequency at an end of a zone's rung: even rungs run from right to left. */
-export function edgeAt(side: 'left' | 'right', zone: number, rate: number): number {
-  const lower = (zone % 2 === 1) === (side === 'left');
-  return (rate * (lower ? zone - 1 : zone)) / 2;
+/** A stretch of the folded axis. */
+export interface Stretch {
+  low: number;
+  high: number;
+}
+
+export const halfOf = (rate: number): number => Number((rate / 2).toPrecision(15));
+
+/** The frequency of a zone that lands on a folded frequency: even zones run from right to left. */
+export function trueFrequency(zone: number, folded: number, rate: number): number {
+  if (folded === 0 || folded === halfOf(rate)) return (rate * ((zone % 2 === 1) === (folded === 0) ? zone - 1 : zone)) / 2;
+  return zone % 2 === 1 ? (rate * (zone - 1)) / 2 + folded : (rate * zone) / 2 - folded;
 }
 
 /** Pixels from a folded frequency. */
-export const place = ({ left, right, half }: Frame, folded: number): number => left + (folded / half) * (right - left);
+export const place = ({ left, right, low, high }: Frame, folded: number): number => left + ((folded - low) / (high - low)) * (right - left);
 
-/** A stretch of the folded axis in pixels, wide enough to be seen. */
+export const inView = (view: Stretch, { low, high }: Stretch): boolean => low <= view.high && view.low <= high;
+
+/** The part in view of a stretch of the folded axis, in pixels, wide enough to be seen. */
 export function stretch(frame: Frame, low: number, high: number): { from: number; to: number } {
-  const from = place(frame, low);
-  const to = place(frame, high);
+  const from = place(frame, Math.min(Math.max(low, frame.low), frame.high));
+  const to = place(frame, Math.min(Math.max(high, frame.low), frame.high));
   if (to - from >= NARROWEST_BAR) return { from, to };
   const start = Math.min(Math.max((from + to - NARROWEST_BAR) / 2, frame.left), frame.right - NARROWEST_BAR);
   return { from: start, to: start + NARROWEST_BAR };

@@ -4,11 +4,12 @@
 // out; the axis; a legend.
 
 import type { BandFigures, PlanFigures } from '../figures';
-import { type Frame, LABEL, type Link, PAD, SMALL, type Text, frameOf, text } from './frame';
+import { type Box, type Frame, LABEL, type Link, PAD, SMALL, type Stretch, type Text, boxOf, collide, frameOf, halfOf, inView, place, text } from './frame';
 import { type Image, layOutput } from './output';
 import { type Piece, type Rung, bandLinks, drawnZones, layRungs } from './rungs';
 import { exactFigure } from '../number-text';
 import { sentences } from '../sentences';
+import type { LadderView } from './view';
 
 export interface LadderLayout {
   width: number;
@@ -18,8 +19,8 @@ export interface LadderLayout {
   top: number;
   rungs: Rung[];
   links: Link[];
-  /** Width of the guard at either end of the axis; 0 where it is too narrow to see. */
-  guard: number;
+  /** The guard at either end of the axis, as far as it is in view and wide enough to be seen. */
+  guards: { x: number; width: number }[];
   bands: BandLayout[];
   outputTop: number;
   axis: number;
@@ -34,6 +35,7 @@ export interface LadderLayout {
 /** A band: where it truly is, and where it lands. */
 export interface BandLayout {
   figures: BandFigures;
+  selected: boolean;
   pieces: Piece[];
   /** Where it goes on from rung to rung. */
   links: Link[];
@@ -49,36 +51,61 @@ export interface LegendEntry {
 export const NARROWEST = 280;
 const SWATCH = 18;
 
-/** Lays the ladder out. The plan has at least one band that can be drawn; a picture narrower than 280 is laid out for 280. */
-export function ladderLayout(figures: PlanFigures, width: number): LadderLayout {
-  const { bands, plan } = figures;
-  const zones = drawnZones(bands);
-  const frame = frameOf(zones, plan.rate!, Math.max(width, NARROWEST));
+/**
+ * Lays the ladder out; null where none of the bands is in view. A picture narrower than 280 is laid out for 280. The plan has a rate.
+ */
+export function ladderLayout(figures: PlanFigures, width: number, view: LadderView): LadderLayout | null {
+  const { plan } = figures;
+  const half = halfOf(plan.rate!);
+  const shown: Stretch = { low: view.from * half, high: view.to === 1 ? half : view.to * half };
+  const bands = figures.bands.filter(({ row, sections }) => (view.role === 'all' || row.role === view.role) && sections.some((one) => inView(shown, one)));
+  if (bands.length === 0) return null;
+  const pairs = figures.pairs.filter((pair) => bands.includes(pair.first) && bands.includes(pair.second));
+  const zones = drawnZones(bands, shown);
+  const frame = frameOf(zones, plan.rate!, shown, Math.max(width, NARROWEST));
   const top = 44;
   const rungs = layRungs(bands, zones, frame, top);
-  const output = layOutput(figures, frame, rungs.bottom + 18);
-  const guard = (Math.min(plan.guard / frame.half, 0.5)) * (frame.right - frame.left);
-  const seenGuard = guard >= 1 ? guard : 0;
-  const legend = layLegend(legendKinds(bands, rungs.rungs, seenGuard > 0, output.overlaps.length > 0), frame, output.bottom + 12);
+  const output = layOutput(bands, pairs, frame, rungs.bottom + 18);
+  const guards = layGuards(plan.guard, frame);
+  const legend = layLegend(legendKinds(bands, rungs.rungs, guards.length > 0, output.overlaps.length > 0), frame, output.bottom + 12);
   return {
     width: frame.width,
     height: legend.bottom,
     frame, top,
     rungs: rungs.rungs,
     links: rungs.links,
-    guard: seenGuard,
+    guards,
     bands: bands.map((band, i) => {
       const pieces = rungs.pieces.get(band)!;
-      return { figures: band, pieces, links: bandLinks(pieces), image: output.images[i]! };
+      return { figures: band, selected: band.row.index === view.selected, pieces, links: bandLinks(pieces, frame), image: output.images[i]! };
     }),
     outputTop: output.top,
     axis: output.axis,
     ticks: output.ticks,
     overlaps: output.overlaps,
     bracket: output.bracket,
-    texts: [...headingTexts(plan.rate!, frame, top), ...rungs.texts, ...output.texts, ...legend.texts],
+    texts: [...headingTexts(plan.rate!, frame, top), ...uncrowded(rungs.texts), ...output.texts, ...legend.texts],
     legend: legend.entries,
   };
+}
+
+/** Where texts would collide, the first one stays. */
+function uncrowded(texts: Text[]): Text[] {
+  const kept: { text: Text; box: Box }[] = [];
+  for (const one of texts) {
+    const box = boxOf(one);
+    if (!kept.some((other) => collide(box, other.box))) kept.push({ text: one, box });
+  }
+  return kept.map((one) => one.text);
+}
+
+function layGuards(guard: number, frame: Frame): { x: number; width: number }[] {
+  const reach = Math.min(guard, frame.half / 2);
+  return [[0, reach], [frame.half - reach, frame.half]].flatMap(([low, high]) => {
+    const from = Math.max(frame.left, place(frame, low!));
+    const to = Math.min(frame.right, place(frame, high!));
+    return to - from >= 1 ? [{ x: from, width: to - from }] : [];
+  });
 }
 
 function headingTexts(rate: number, { width }: Frame, top: number): Text[] {

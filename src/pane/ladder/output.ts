@@ -1,8 +1,8 @@
 // The lowest part of the zone ladder: every image on the common axis, and where images land on one another.
 
 import { ticks } from 'd3-array';
-import type { BandFigures, Pair, PlanFigures } from '../figures';
-import { type BarLabel, type BarShape, type Frame, LABEL, PAD, SMALL, type Text, pack, place, stretch, text } from './frame';
+import type { BandFigures, Pair } from '../figures';
+import { type BarLabel, type BarShape, type Frame, LABEL, PAD, SMALL, type Text, inView, pack, place, stretch, text } from './frame';
 import { sentences } from '../sentences';
 import { textWidth } from '../text-width';
 
@@ -29,12 +29,12 @@ export interface Image {
   marks: { x: number; width: number }[];
 }
 
-export function layOutput({ bands, pairs }: PlanFigures, frame: Frame, top: number): Output {
-  const { left, right, half, width } = frame;
+export function layOutput(bands: BandFigures[], pairs: Pair[], frame: Frame, top: number): Output {
+  const { left, right, low, high, width } = frame;
   const texts = [text('output', PAD, top + 8, 'start', sentences.output, LABEL, width - 2 * PAD)];
   let y = top + 18;
 
-  const stretches = sharedStretches(bands, pairs);
+  const stretches = sharedStretches(bands, pairs).filter((one) => inView(frame, one));
   const regions = union(stretches);
   const bracket = y + 16;
   if (regions.length > 0) {
@@ -52,20 +52,20 @@ export function layOutput({ bands, pairs }: PlanFigures, frame: Frame, top: numb
     return {
       shape: { x: from, width: to - from, y: middle, height: packed.height, tall },
       label: label && { ...label, y: middle, size: packed.size },
-      marks: union(stretches.filter((one) => one.bands.includes(band))).map(({ low, high }) => inPixels(frame, low, high)),
+      marks: union(stretches.filter((one) => one.bands.includes(band))).map((shared) => inPixels(frame, shared.low, shared.high)),
     };
   });
 
-  const round = ticks(0, half, Math.max(2, Math.floor((right - left) / 60))).filter((tick) => tick > 0 && tick < half);
+  const round = ticks(low, high, Math.max(2, Math.floor((right - left) / 60))).filter((tick) => tick > low && tick < high);
   const label = (folded: number) => text('tick', place(frame, folded), axis + 13, 'middle', frame.write(folded), SMALL);
-  const ends = [label(0), label(half)];
+  const ends = [label(low), label(high)];
   const between = round.map(label).filter((one) => ends.every((end) => Math.abs(end.x - one.x) >= (end.width + one.width) / 2 + 6));
   texts.push(...ends, ...between);
 
   return {
     top: y, axis, images, texts, bracket,
-    ticks: [0, ...round, half].map((tick) => place(frame, tick)),
-    overlaps: regions.map(({ low, high }) => inPixels(frame, low, high)),
+    ticks: [low, ...round, high].map((tick) => place(frame, tick)),
+    overlaps: regions.map((region) => inPixels(frame, region.low, region.high)),
     bottom: axis + 20,
   };
 }

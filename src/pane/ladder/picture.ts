@@ -40,16 +40,17 @@ function patterns(): Tree {
 // Ground: what lies behind the bands
 
 function ground(layout: LadderLayout): Tree[] {
-  const { frame: { left, right }, top, axis, guard, ticks, rungs, links, overlaps, outputTop } = layout;
+  const { frame: { left, right }, top, axis, guards, ticks, rungs, links, overlaps, outputTop } = layout;
+  const marked = new Set(layout.texts.flatMap(({ kind, y }) => (kind === 'zone' ? [y] : [])));
   return [
     ...rungs.map((rung) => element('rect', { class: rung.inverted ? 'rung inverted' : 'rung', ...rectangle(left, rung.top, right - left, rung.line - rung.top) })),
     element('rect', { class: 'rung output', ...rectangle(left, outputTop, right - left, axis - outputTop) }),
-    ...(guard > 0 ? [left, right - guard].map((x) => element('rect', { class: 'guard', ...rectangle(x, top, guard, axis - top) })) : []),
+    ...guards.map(({ x, width }) => element('rect', { class: 'guard', ...rectangle(x, top, width, axis - top) })),
     element('path', { class: 'grid', d: ticks.map((x) => `M${round(x)} ${round(top)}V${round(axis)}`).join('') }),
     ...overlaps.map(({ x, width }) => element('rect', { class: 'overlap', fill: 'url(#ladder-overlap)', ...rectangle(x, outputTop, width, axis - outputTop) })),
     ...rungs.map((rung) => element('path', { class: 'line', d: rungLine(rung, left, right) })),
     ...links.map((link) => element('path', { class: 'line', d: swing(link, left, right) })),
-    ...rungs.map((rung) => element('rect', {
+    ...rungs.filter(({ line }) => marked.has(line)).map((rung) => element('rect', {
       class: rung.inverted ? 'mark inverted' : 'mark', ...rectangle(PAD, rung.line - 7.5, layout.frame.markWidth, 15), rx: 3,
     })),
     element('path', { class: 'axis', d: `M${round(left)} ${round(axis)}H${round(right)}${ticks.map((x) => `M${round(x)} ${round(axis)}v4`).join('')}` }),
@@ -69,17 +70,21 @@ function swing({ side, from, to }: Link, left: number, right: number): string {
 
 // Bands
 
-function bandGroup({ figures, pieces, links, image }: BandLayout, { frame: { left, right } }: LadderLayout): Tree {
+function bandGroup({ figures, selected, pieces, links, image }: BandLayout, { frame: { left, right } }: LadderLayout): Tree {
   const { row, state } = figures;
   const words = bandSentence(figures);
   const shownState = row.role === 'wanted' ? state.replace(' ', '-') : 'clear';
-  return element('g', { class: `band ${row.role} ${shownState}`, 'data-row': row.index, tabindex: -1, role: 'img', 'aria-label': words },
+  return element('g', {
+    class: `band ${row.role} ${shownState}${selected ? ' selected' : ''}`, 'data-row': row.index, tabindex: -1,
+    role: 'button', 'aria-label': words, 'aria-pressed': selected ? 'true' : 'false',
+  },
     element('title', {}, words),
     ...pieces.filter(({ zone, lastZone }) => zone === lastZone).map(({ shape }) =>
       element('rect', { class: 'strip', ...rectangle(shape.x, shape.y, shape.width, image.shape.y - shape.y) })),
     ...links.map((link) => element('path', { class: 'goes-on', d: swing(link, left, right) })),
     ...pieces.map(({ shape }) => bar(shape, row.role)),
     bar(image.shape, row.role),
+    ...(selected ? [...pieces.map(({ shape }) => shape), image.shape].map(corners) : []),
     ...image.marks.map(({ x, width }) =>
       element('rect', { class: 'shared', fill: 'url(#ladder-overlap)', ...rectangle(x, image.shape.y - image.shape.height / 2, width, image.shape.height) })),
     ...[...pieces.map(({ label }) => label), image.label].flatMap((label) => (label ? [labelElement(label)] : [])));
@@ -91,6 +96,13 @@ function bar({ x, width, y, height, tall }: BarShape, role: string): Tree {
   const bottom = y + height / 2;
   const d = `M${round(x)} ${round(bottom)}V${round(bottom - leftHeight * height)}L${round(x + width)} ${round(bottom - rightHeight * height)}V${round(bottom)}Z`;
   return element('path', { class: 'bar', fill: role === 'unwanted' ? 'url(#ladder-unwanted)' : undefined, d });
+}
+
+/** Corners around a bar: the mark of the selected row. */
+function corners({ x, width, y, height }: BarShape): Tree {
+  const [left, right, top, bottom] = [x - 3, x + width + 3, y - height / 2 - 2.5, y + height / 2 + 2.5].map(round) as [number, number, number, number];
+  const d = `M${left + 4} ${top}H${left}V${bottom}H${left + 4}M${right - 4} ${top}H${right}V${bottom}H${right - 4}`;
+  return element('path', { class: 'picked', d });
 }
 
 function labelElement({ x, y, anchor, inside, text, suffix, size }: BarLabel): Tree {

@@ -1,4 +1,5 @@
-// Going from band to band in the picture: one stop for the tab key, arrow keys within, and the figures of the band at hand in words.
+// Going from band to band in the picture and picking one: a stop for the tab key, arrow keys within, Enter or a click to pick, and the
+// figures of the band at hand in words.
 
 import { toDom, element } from '../element';
 import { sentences } from '../sentences';
@@ -18,7 +19,8 @@ const STEPS: Record<string, (at: number, count: number) => number> = {
   End: (_, count) => count - 1,
 };
 
-export function stepThroughBands(document: Document, picture: HTMLElement): Stepping {
+/** @param pick told the row of a band that was picked, as its place in the columns */
+export function stepThroughBands(document: Document, picture: HTMLElement, pick: (row: number) => void): Stepping {
   // Screen readers get the same words from the band itself.
   const readout = toDom(document, element('p', { class: 'readout', 'aria-hidden': 'true' })) as HTMLElement;
   let current: string | null = null;
@@ -43,13 +45,19 @@ export function stepThroughBands(document: Document, picture: HTMLElement): Step
   picture.addEventListener('focusout', () => tell(null));
   picture.addEventListener('pointerover', (event) => tell(bandOf(event.target) ?? atHand()));
   picture.addEventListener('pointerleave', () => tell(atHand()));
+  const pickFrom = (band: Element | null) => {
+    if (band) pick(Number(band.getAttribute('data-row')));
+  };
+  picture.addEventListener('click', (event) => pickFrom(bandOf(event.target)));
   picture.addEventListener('keydown', (event) => {
-    const step = STEPS[event.key];
     const all = bands();
     const at = all.findIndex((band) => band === bandOf(event.target));
-    if (!step || at < 0 || event.altKey || event.ctrlKey || event.metaKey) return;
+    if (at < 0 || event.altKey || event.ctrlKey || event.metaKey || event.shiftKey) return;
+    const step = STEPS[event.key];
+    if (step) all[step(at, all.length)]!.focus();
+    else if (event.key === 'Enter' || event.key === ' ') pickFrom(all[at]!);
+    else return;
     event.preventDefault();
-    all[step(at, all.length)]!.focus();
   });
   return { readout, renew };
 }
