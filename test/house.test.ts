@@ -14,12 +14,14 @@ const MAY_IMPORT: Record<string, readonly string[]> = {
   'host/port': [],
   'host/office': ['host/port'],
   'host/sheet': ['host/port'],
-  'host/file': ['host/port'],
+  'host/file': ['host/port', 'formula'],
+  formula: [],
+  plain: ['host/port', 'formula'],
   pane: ['engine', 'host/port'],
   help: [],
   workbench: [],
   demo: ['host/port'],
-  main: ['engine', 'functions', 'host/port', 'host/office', 'host/sheet', 'host/file', 'pane', 'workbench', 'demo'],
+  main: ['engine', 'functions', 'host/port', 'host/office', 'host/sheet', 'host/file', 'plain', 'pane', 'workbench', 'demo'],
 };
 
 /** The part that a source file belongs to; undefined for a file that knows no room. */

@@ -1,6 +1,6 @@
 // Which formulas have to be computed again when cells change: those that read them, those that read these, and so on.
 
-import { type Area, isSingle, overlap } from './address';
+import { type Area, isSingle, overlap } from '../../formula/address';
 import type { SheetArea, Translation } from './formula-to-sheet';
 
 /** A formula as far as its place among the others goes. */

@@ -1,9 +1,9 @@
 // A formula of a sheet, as the file writes it.
 
 import { parseA1Ref, parseStructRef, tokenTypes } from '@borgar/fx/xlsx';
-import { computesArrays, givesArray, takesRange } from './array-arguments';
-import { type Call, type Node, argumentsOf, formulaTree, isCall, isOperator, isReference, isSpace } from './formula-tree';
-import { fileFunctionName, isOurs } from './function-names';
+import { computesArrays, givesArray, takesRange } from '../../formula/array-arguments';
+import { type Call, type Node, argumentsOf, formulaTree, isCall, isOperator, isReference, isSpace } from '../../formula/formula-tree';
+import { fileFunctionName, isOurs } from '../../formula/function-names';
 
 export interface FileForm {
   /** Without "=". */

@@ -4,11 +4,11 @@
 // an ordinary formula takes from a range beside it.
 
 import { parseA1Ref, parseStructRef, tokenTypes, tokenize, translateTokensToA1, translateTokensToR1C1 } from '@borgar/fx/xlsx';
-import { type Area, LAST_COLUMN, LAST_ROW, areaAddress, cellAddress, columnsOf, isSingle, rowsOf, sheetPrefix, singleCell } from './address';
-import { isOfSingleValues } from './array-arguments';
+import { type Area, LAST_COLUMN, LAST_ROW, areaAddress, cellAddress, columnsOf, isSingle, rowsOf, sheetPrefix, singleCell } from '../../formula/address';
+import { isOfSingleValues } from '../../formula/array-arguments';
 import { type Book, findName, sheetNamed } from './book';
-import { type Call, type Node, argumentsOf, formulaTree, isCall, isOperator, isReference, isSpace, treeOf } from './formula-tree';
-import { isOurs, sheetFunctionName } from './function-names';
+import { type Call, type Node, argumentsOf, formulaTree, isCall, isOperator, isReference, isSpace, treeOf } from '../../formula/formula-tree';
+import { isOurs, sheetFunctionName } from '../../formula/function-names';
 import type { FileFormula } from './sheet-part';
 import { structuredArea } from './tables';
 

@@ -1,7 +1,7 @@
 // A workbook file as plain data.
 
 import type { Cell, Sheet, Style, Workbook } from '../port';
-import { areaAddress, columnsOf, isSingle, rowsOf } from './address';
+import { areaAddress, columnsOf, isSingle, rowsOf } from '../../formula/address';
 import { type Book, isBuiltIn, openBook } from './book';
 import { toSheetFormula } from './formula-to-sheet';
 import { notKept } from './not-kept';

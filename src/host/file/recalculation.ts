@@ -2,7 +2,7 @@
 
 import type { Cell, CellValue, Sheet, Workbook } from '../port';
 import { AffectedFormulas, type Dependent } from './affected';
-import { type Area, areaOf, cellAddress, columnsOf, eachCell, isSingle, overlap, rowsOf, sameArea, singleCell } from './address';
+import { type Area, areaOf, cellAddress, columnsOf, eachCell, isSingle, overlap, rowsOf, sameArea, singleCell } from '../../formula/address';
 import type { Book } from './book';
 import { isError } from './cell-values';
 import { type Place, type SheetArea, type Translation, toSheetFormula } from './formula-to-sheet';

@@ -2,7 +2,7 @@
 
 import { tokenize, translateTokensToA1, translateTokensToR1C1 } from '@borgar/fx/xlsx';
 import type { CellValue } from '../port';
-import { type Area, areaAddress, cellAddress, columnsOf, eachCell, isSingle, parseArea, rowsOf, sameArea, singleCell } from './address';
+import { type Area, areaAddress, cellAddress, columnsOf, eachCell, isSingle, parseArea, rowsOf, sameArea, singleCell } from '../../formula/address';
 import { type SharedString, readValue, sameValue, writeValue } from './cell-values';
 import type { DynamicArrays } from './dynamic-arrays';
 import { type Edit, type Tag, type XmlElement, XmlTree, applyEdits, attributeText, child, childrenOf, encodeCellText, escapeText, parseXml, prefixOf, visitXml } from './xml';

@@ -1,7 +1,7 @@
 // The tables of a sheet, for structured references.
 
 import type { ReferenceStructXlsx } from '@borgar/fx/xlsx';
-import { type Area, contains, parseArea } from './address';
+import { type Area, contains, parseArea } from '../../formula/address';
 import { type XmlElement, child, childrenOf, decodeCellText } from './xml';
 
 export interface Table {

@@ -1,7 +1,7 @@
 // An .xlsx file as a host: what is written and computed changes its cells, everything else of it stays byte for byte.
 
 import { type Block, type CellInput, type CellValue, type Host } from '../port';
-import { type Area, LAST_COLUMN, LAST_ROW, areaAddress, cellAddress, columnsOf, isSingle, rowsOf, singleCell } from './address';
+import { type Area, LAST_COLUMN, LAST_ROW, areaAddress, cellAddress, columnsOf, isSingle, rowsOf, singleCell } from '../../formula/address';
 import { type Book, openBook, sheetNamed } from './book';
 import { faults } from './faults';
 import { type SheetArea, referencedArea } from './formula-to-sheet';

@@ -2,7 +2,7 @@
 
 import JSZip from 'jszip';
 import type { Cell, Sheet, Workbook } from '../port';
-import { type Area, areaOf, cellAddress, isSingle, parseArea, singleCell } from './address';
+import { type Area, areaOf, cellAddress, isSingle, parseArea, singleCell } from '../../formula/address';
 import { isError } from './cell-values';
 import { metadataContentType, metadataRelation, metadataText } from './dynamic-arrays';
 import { faults } from './faults';
