@@ -17,6 +17,7 @@ import MiniCssExtractPlugin from 'mini-css-extract-plugin';
 import webpack from 'webpack';
 import { manifestFor } from './manifest/manifest-for.js';
 import { helpPage } from './src/help/help-page.js';
+import { readFamily, readSentences } from './src/help/sources.js';
 
 const root = import.meta.dirname;
 const at = (...parts) => path.join(root, ...parts);
@@ -53,7 +54,9 @@ class FunctionsJson {
           functions: generated.functions.map((f) => ({ ...f, helpUrl: `${this.base}/help.html#${f.id}` })),
         };
         compilation.updateAsset('functions.json', new webpack.sources.RawSource(`${JSON.stringify(metadata, null, 2)}\n`));
-        compilation.emitAsset('help.html', new webpack.sources.RawSource(helpPage(metadata, version)));
+        const page = helpPage(metadata, FAMILIES.map(readFamily), readSentences(at('src/engine/fault.ts')), version);
+        compilation.emitAsset('help.html', new webpack.sources.RawSource(page));
+        compilation.emitAsset('search.js', new webpack.sources.RawSource(readFileSync(at('src/help/search.js'), 'utf8')));
       });
     });
   }

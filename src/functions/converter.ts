@@ -14,6 +14,12 @@ import { headerRow, eachRow, number, optional, single, table, tone, vector } fro
  * @param {any[][]} [usable] Flat part of each output rate, above 0 and at most 1 (default 1)
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Output low, Output high, Output rate, Margin (negative from the stage on that no longer holds the band), Inverted
+ * @formula image less oscillator; margin = usable·rate/2 less the farther end
+ * @source common practice of digital down-conversion
+ * @example =FOLD.CHAIN(60, 90, 100, 25, {2;2}, 0.9) =>
+ *   Output low | Output high | Output rate | Margin | Inverted
+ *   -15 | 15 | 50 | 7.5 | TRUE
+ *   -15 | 15 | 25 | -3.75 | TRUE
  */
 export function chain(low: any[][], high: any[][], rate: any[][], oscillator: any[][], decimation: any[][], usable?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Output low', 'Output high', 'Output rate', 'Margin', 'Inverted'], () =>
@@ -30,6 +36,9 @@ export function chain(low: any[][], high: any[][], rate: any[][], oscillator: an
  * @param {any[][]} rate Sample rate, above 0
  * @param {any[][]} bits Bits of the accumulator, 1 to 53
  * @returns {any[][]} Word
+ * @formula round(2ᵇ·f/fs) modulo 2ᵇ
+ * @source common practice of direct digital synthesis
+ * @example =FOLD.TUNINGWORD(25, 100, 32) => 1073741824
  */
 export function tuningword(frequency: any[][], rate: any[][], bits: any[][]): any[][] {
   return eachRow([tone('frequency', frequency), number('rate', rate), number('bits', bits)], tuningWord);
@@ -42,6 +51,9 @@ export function tuningword(frequency: any[][], rate: any[][], bits: any[][]): an
  * @param {any[][]} rate Sample rate, above 0
  * @param {any[][]} bits Bits of the accumulator, 1 to 53
  * @returns {any[][]} Frequency
+ * @formula word·fs/2ᵇ
+ * @source common practice of direct digital synthesis
+ * @example =FOLD.TUNED(10, 100, 8) => 10.15625
  */
 export function tuned(frequency: any[][], rate: any[][], bits: any[][]): any[][] {
   return eachRow([tone('frequency', frequency), number('rate', rate), number('bits', bits)], tunedFrequency);

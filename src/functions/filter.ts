@@ -11,6 +11,11 @@ import { eachRow, eachRowOfTable, edges, headerRow, limit, number, responseKind,
  * @param {any[][]} rate Sample rate, above 0
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Lower stop edge, Upper stop edge, Lower transition, Upper transition (blank below zone 1)
+ * @formula the ends, next to the band, of its images in the zones below and above
+ * @source common practice
+ * @example =FOLD.STOPBAND(60, 90, 100) =>
+ *   Lower stop edge | Upper stop edge | Lower transition | Upper transition
+ *   40 | 110 | 20 | 20
  */
 export function stopband(low: any[][], high: any[][], rate: any[][], headers?: any[][]): any[][] {
   return eachRowOfTable(
@@ -33,6 +38,9 @@ export function stopband(low: any[][], high: any[][], rate: any[][], headers?: a
  * @param {any[][]} ripple Greatest loss in the pass band in dB, above 0
  * @param {any[][]} attenuation Least loss in the stop band in dB, above ripple
  * @returns {any[][]} Order of the low-pass prototype
+ * @formula with s the nearer stop edge in the prototype and d = √((10^(A/10) − 1)/(10^(R/10) − 1)): lg d/lg s; arcosh d/arcosh s; K(1/s)·K′(1/d)/(K′(1/s)·K(1/d))
+ * @source Proakis and Manolakis, Digital Signal Processing; for elliptic filters by the arithmetic-geometric mean, Abramowitz and Stegun, chapter 17
+ * @example =FOLD.FILTERORDER("chebyshev", 60, 90, 40, 110, 1, 60) => 7
  */
 export function filterorder(response: any[][], passLow: any[][], passHigh: any[][], stopLow: any[][], stopHigh: any[][], ripple: any[][], attenuation: any[][]): any[][] {
   return eachRow(
@@ -52,6 +60,9 @@ export function filterorder(response: any[][], passLow: any[][], passHigh: any[]
  * @param {any[][]} frequency Frequency to look at, 0 or more
  * @param {any[][]} [attenuation] Least loss in the stop band in dB; needed for "inverse chebyshev" and "elliptic"
  * @returns {any[][]} dB
+ * @formula 10·lg(1 + (10^(R/10) − 1)·F²), with F = wⁿ, Tₙ(w) or the elliptic rational function; inverse Chebyshev from its stop band
+ * @source Proakis and Manolakis, Digital Signal Processing
+ * @example =FOLD.ATTENUATION("chebyshev", 3, 60, 90, 1, 100) => 14.1446446209097
  */
 export function attenuation(response: any[][], order: any[][], passLow: any[][], passHigh: any[][], ripple: any[][], frequency: any[][], attenuation?: any[][]): any[][] {
   return eachRow(

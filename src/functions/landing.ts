@@ -12,6 +12,9 @@ import { eachRow, eachRowOfTable, edges, headerRow, number, optional, samplingKi
  * @param {any[][]} rate Sample rate, above 0
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @returns {any[][]} Folded frequency
+ * @formula |f − fs·round(f/fs)|; at IQ sampling f − fs·⌊f/fs + ½⌋
+ * @source the sampling theorem; Lyons, Understanding Digital Signal Processing, 3rd ed., section 2.1
+ * @example =FOLD.FREQ(70, 100) => 30
  */
 export function freq(frequency: any[][], rate: any[][], sampling?: any[][]): any[][] {
   return eachRow([tone('frequency', frequency), number('rate', rate), samplingKind(sampling)], foldedFrequency);
@@ -24,6 +27,9 @@ export function freq(frequency: any[][], rate: any[][], sampling?: any[][]): any
  * @param {any[][]} rate Sample rate, above 0
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @returns {any[][]} Zone number
+ * @formula ⌊2f/fs⌋ + 1; at IQ sampling ⌊f/fs + ½⌋
+ * @source common practice: zones are half the rate wide and counted from 1
+ * @example =FOLD.ZONE(70, 100) => 2
  */
 export function zone(frequency: any[][], rate: any[][], sampling?: any[][]): any[][] {
   return eachRow([tone('frequency', frequency), number('rate', rate), samplingKind(sampling)], frequencyZone);
@@ -36,6 +42,9 @@ export function zone(frequency: any[][], rate: any[][], sampling?: any[][]): any
  * @param {any[][]} rate Sample rate, above 0
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @returns {any[][]} TRUE or FALSE
+ * @formula whether the zone number is even; never at IQ sampling
+ * @source Lyons, Understanding Digital Signal Processing, 3rd ed., section 2.3
+ * @example =FOLD.INVERTED(70, 100) => TRUE
  */
 export function inverted(frequency: any[][], rate: any[][], sampling?: any[][]): any[][] {
   return eachRow([tone('frequency', frequency), number('rate', rate), samplingKind(sampling)], isInverted);
@@ -49,6 +58,9 @@ export function inverted(frequency: any[][], rate: any[][], sampling?: any[][]):
  * @param {any[][]} rate Sample rate, above 0
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @returns {any[][]} Low end of the image
+ * @formula the least folded frequency of the band: 0 where it holds a multiple of fs
+ * @source common practice
+ * @example =FOLD.LOW(60, 90, 100) => 10
  */
 export function low(low: any[][], high: any[][], rate: any[][], sampling?: any[][]): any[][] {
   return eachRow([...edges('low', low, 'high', high), number('rate', rate), samplingKind(sampling)], imageLow);
@@ -62,6 +74,9 @@ export function low(low: any[][], high: any[][], rate: any[][], sampling?: any[]
  * @param {any[][]} rate Sample rate, above 0
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @returns {any[][]} High end of the image
+ * @formula the greatest folded frequency of the band: fs/2 where it holds an odd multiple of fs/2
+ * @source common practice
+ * @example =FOLD.HIGH(60, 90, 100) => 40
  */
 export function high(low: any[][], high: any[][], rate: any[][], sampling?: any[][]): any[][] {
   return eachRow([...edges('low', low, 'high', high), number('rate', rate), samplingKind(sampling)], imageHigh);
@@ -77,6 +92,9 @@ export function high(low: any[][], high: any[][], rate: any[][], sampling?: any[
  * @param {any[][]} [ppm] How far the clock may be off either way, in parts per million (default 0)
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @returns {any[][]} Margin
+ * @formula min(low − e₁·(1 + t), e₂·(1 − t) − high) − guard, with the zone's edges e₁ and e₂ and t = ppm/10⁶
+ * @source the definition of this add-in; the zone is that of the band's centre
+ * @example =FOLD.MARGIN(60, 90, 100, 2, 1000) => 7.9
  */
 export function margin(low: any[][], high: any[][], rate: any[][], guard?: any[][], ppm?: any[][], sampling?: any[][]): any[][] {
   return eachRow(
@@ -95,6 +113,9 @@ export function margin(low: any[][], high: any[][], rate: any[][], guard?: any[]
  * @param {any[][]} [ppm] How far the clock may be off either way, in parts per million (default 0)
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @returns {any[][]} Text
+ * @formula clear where MARGIN is 0 or more, tight where it would be without guard and tolerance, otherwise the edge that is crossed, or too wide
+ * @source the definition of this add-in
+ * @example =FOLD.CHECK(17.5, 22.5, 40) => crosses 20
  */
 export function check(low: any[][], high: any[][], rate: any[][], guard?: any[][], ppm?: any[][], sampling?: any[][]): any[][] {
   return eachRow(
@@ -113,6 +134,9 @@ export function check(low: any[][], high: any[][], rate: any[][], guard?: any[][
  * @param {any[][]} rate Sample rate, above 0
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @returns {any[][]} Gap
+ * @formula the greater of one image's low end less the other's high end, either way round
+ * @source the definition of this add-in
+ * @example =FOLD.GAP(60, 90, 10, 20, 100) => -10
  */
 export function gap(low: any[][], high: any[][], otherLow: any[][], otherHigh: any[][], rate: any[][], sampling?: any[][]): any[][] {
   return eachRow(
@@ -132,6 +156,11 @@ export function gap(low: any[][], high: any[][], otherLow: any[][], otherHigh: a
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} A row for each band
+ * @formula LOW, HIGH, ZONE of the centre, INVERTED, MARGIN and CHECK side by side
+ * @source see there
+ * @example =FOLD.BAND(60, 90, 100, 2, 1000) =>
+ *   Folded low | Folded high | Zone | Inverted | Margin | Check
+ *   10 | 40 | 2 | TRUE | 7.9 | clear
  */
 export function band(low: any[][], high: any[][], rate: any[][], guard?: any[][], ppm?: any[][], sampling?: any[][], headers?: any[][]): any[][] {
   return eachRowOfTable(
@@ -155,6 +184,13 @@ export function band(low: any[][], high: any[][], rate: any[][], guard?: any[][]
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Frequency, Zone, Inverted
+ * @formula k·fs ± f for every whole k; at IQ sampling k·fs + f
+ * @source Lyons, Understanding Digital Signal Processing, 3rd ed., section 2.1
+ * @example =FOLD.IMAGES(30, 100, 0, 150) =>
+ *   Frequency | Zone | Inverted
+ *   30 | 1 | FALSE
+ *   70 | 2 | TRUE
+ *   130 | 3 | FALSE
  */
 export function images(folded: any[][], rate: any[][], from: any[][], to: any[][], sampling?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Frequency', 'Zone', 'Inverted'], () =>
@@ -175,6 +211,11 @@ export function images(folded: any[][], rate: any[][], from: any[][], to: any[][
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Lowest, Highest
+ * @formula the intersection, over the rates, of all k·fs ± observed, each widened by the tolerance
+ * @source the Chinese remainder theorem; Sunzi Suanjing
+ * @example =FOLD.RESOLVE({14;10;4}, {56;40;33}, 0, 1000) =>
+ *   Lowest | Highest
+ *   70 | 70
  */
 export function resolve(observed: any[][], rates: any[][], from: any[][], to: any[][], tolerance?: any[][], sampling?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Lowest', 'Highest'], () =>

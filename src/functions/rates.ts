@@ -15,6 +15,13 @@ import { type Cells, count as howMany, eachRow, edges, headerRow, limit, number,
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Zone, Lowest rate, Highest rate (blank where unlimited), Width, Inverted
+ * @formula in zone z from 2·high/z to 2·low/(z − 1), each moved in by guard and tolerance
+ * @source Vaughan, Scott and White, The theory of bandpass sampling, IEEE Trans. Signal Processing 39(9), 1991
+ * @example =FOLD.RATES(17.5, 22.5, 11, 40) =>
+ *   Zone | Lowest rate | Highest rate | Width | Inverted
+ *   4 | 11.25 | 11.6666666666666 | 0.4166666666666 | TRUE
+ *   3 | 15 | 17.5 | 2.5 | FALSE
+ *   2 | 22.5 | 35 | 12.5 | TRUE
  */
 export function rates(low: any[][], high: any[][], from?: any[][], to?: any[][], guard?: any[][], ppm?: any[][], sampling?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Zone', 'Lowest rate', 'Highest rate', 'Width', 'Inverted'], () =>
@@ -33,6 +40,9 @@ export function rates(low: any[][], high: any[][], from?: any[][], to?: any[][],
  * @param {any[][]} [ppm] How far the clock may be off either way, in parts per million (default 0)
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @returns {any[][]} Lowest rate
+ * @formula 2·high/⌊high/width⌋ without guard and tolerance
+ * @source Vaughan, Scott and White, 1991
+ * @example =FOLD.MINRATE(17.5, 22.5) => 11.25
  */
 export function minrate(low: any[][], high: any[][], guard?: any[][], ppm?: any[][], sampling?: any[][]): any[][] {
   return eachRow([...edges('low', low, 'high', high), optional('guard', guard, 0), optional('ppm', ppm, 0), samplingKind(sampling)], lowestRate);
@@ -47,6 +57,9 @@ export function minrate(low: any[][], high: any[][], guard?: any[][], ppm?: any[
  * @param {any[][]} [guard] Smallest clear distance wanted, 0 or more (default 0)
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @returns {any[][]} ppm
+ * @formula the least relative change of the rate that takes the margin to 0
+ * @source the definition of this add-in
+ * @example =FOLD.TOLERANCE(60, 90, 100) => 100000
  */
 export function tolerance(low: any[][], high: any[][], rate: any[][], guard?: any[][], sampling?: any[][]): any[][] {
   return eachRow([...edges('low', low, 'high', high), number('rate', rate), optional('guard', guard, 0), samplingKind(sampling)], clockTolerance);
@@ -67,6 +80,11 @@ export function tolerance(low: any[][], high: any[][], rate: any[][], guard?: an
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Lowest rate, Highest rate, Width, Centre (blank where unlimited), Headroom ppm
+ * @formula all rates but those at which a multiple of fs (of fs/cores) falls between the bounds that a zone edge or another image sets
+ * @source the rule of bandpass sampling, applied to sums and differences of bands
+ * @example =FOLD.PLANRATES({10;60}, {12;62}, {"wanted";"unwanted"}, 30, 100, 0.5) =>
+ *   Lowest rate | Highest rate | Width | Centre | Headroom ppm
+ *   100 | 200 | 100 | 150 | 333333.333333333
  */
 export function planrates(low: any[][], high: any[][], role?: any[][], from?: any[][], to?: any[][], guard?: any[][], ppm?: any[][], harmonics?: any[][], cores?: any[][], sampling?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Lowest rate', 'Highest rate', 'Width', 'Centre', 'Headroom ppm'], () =>
@@ -91,6 +109,13 @@ export function planrates(low: any[][], high: any[][], role?: any[][], from?: an
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Rate, Headroom ppm, Tightest gap, Tightest rule
+ * @formula the rates of the grid that PLANRATES allows, by the relative distance to the nearest bound
+ * @source as PLANRATES
+ * @example =FOLD.RANKRATES({10;60}, {12;62}, 5, {"wanted";"unwanted"}, 30, 90, 0.5, , , , 3) =>
+ *   Rate | Headroom ppm | Tightest gap | Tightest rule
+ *   90 | 172222.222222222 | 10 | row 1: zone edge
+ *   30 | 125000 | 3 | row 1: zone edge
+ *   60 | 125000 | 8 | row 1: band against row 2
  */
 export function rankrates(low: any[][], high: any[][], grid: any[][], role?: any[][], from?: any[][], to?: any[][], guard?: any[][], ppm?: any[][], harmonics?: any[][], cores?: any[][], count?: any[][], sampling?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Rate', 'Headroom ppm', 'Tightest gap', 'Tightest rule'], () => {
@@ -117,6 +142,11 @@ export function rankrates(low: any[][], high: any[][], grid: any[][], role?: any
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Band, Rule, Against, Gap
+ * @formula every rule of PLANRATES at one rate; the gap is negative by what an image would have to move
+ * @source as PLANRATES
+ * @example =FOLD.CONFLICTS({10;60}, {12;62}, 72, {"wanted";"unwanted"}, 0.5, , , , {"Beacon";"Blocker"}) =>
+ *   Band | Rule | Against | Gap
+ *   Beacon | band | Blocker | -2
  */
 export function conflicts(low: any[][], high: any[][], rate: any[][], role?: any[][], guard?: any[][], ppm?: any[][], harmonics?: any[][], cores?: any[][], name?: any[][], sampling?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Band', 'Rule', 'Against', 'Gap'], () => {
@@ -140,6 +170,9 @@ export function conflicts(low: any[][], high: any[][], rate: any[][], role?: any
  * @param {any[][]} [cores] Interleaved cores, 1 to 64 (default 1)
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @returns {any[][]} ppm
+ * @formula the relative distance from the rate to the nearest bound of PLANRATES, in ppm
+ * @source as PLANRATES
+ * @example =FOLD.HEADROOM({10;60}, {12;62}, 80, {"wanted";"unwanted"}, 0.5) => 68750
  */
 export function headroom(low: any[][], high: any[][], rate: any[][], role?: any[][], guard?: any[][], harmonics?: any[][], cores?: any[][], sampling?: any[][]): any[][] {
   return result(() => headroomAt(planOf(low, high, role, guard, harmonics, cores, sampling), single(number('rate', rate))));
@@ -155,6 +188,15 @@ export function headroom(low: any[][], high: any[][], rate: any[][], role?: any[
  * @param {any[][]} [divide] Highest D, 1 to 10000 (default 16)
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Rate, N, D
+ * @formula reference·N/D in lowest terms
+ * @source common practice of phase-locked loops
+ * @example =FOLD.CLOCKRATES(10, 30, 50, 10, 2) =>
+ *   Rate | N | D
+ *   30 | 3 | 1
+ *   35 | 7 | 2
+ *   40 | 4 | 1
+ *   45 | 9 | 2
+ *   50 | 5 | 1
  */
 export function clockrates(reference: any[][], from: any[][], to: any[][], multiply?: any[][], divide?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Rate', 'N', 'D'], () =>

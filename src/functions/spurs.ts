@@ -13,6 +13,13 @@ import { count, headerRow, holdKind, number, optional, rowNames, samplingKind, s
  * @param {any[][]} [sampling] "real" (default) or "iq"
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Order, Low, High, Folded low, Folded high, Zone, Inverted, Gap (to the fundamental's image)
+ * @formula n·low to n·high, folded
+ * @source Kester (ed.), The Data Conversion Handbook
+ * @example =FOLD.HARMONICS(10, 12, 50, 3) =>
+ *   Order | Low | High | Folded low | Folded high | Zone | Inverted | Gap
+ *   1 | 10 | 12 | 10 | 12 | 1 | FALSE | 
+ *   2 | 20 | 24 | 20 | 24 | 1 | FALSE | 8
+ *   3 | 30 | 36 | 14 | 20 | 2 | TRUE | 2
  */
 export function harmonics(low: any[][], high: any[][], rate: any[][], highest?: any[][], sampling?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Order', 'Low', 'High', 'Folded low', 'Folded high', 'Zone', 'Inverted', 'Gap'], () =>
@@ -29,6 +36,15 @@ export function harmonics(low: any[][], high: any[][], rate: any[][], highest?: 
  * @param {any[][]} cores Interleaved cores, 1 to 64
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Kind, Multiple (q of q·rate/cores), Folded low, Folded high, Gap
+ * @formula images at q·fs/M ± f, offset tones at q·fs/M
+ * @source Black and Hodges, Time interleaved converter arrays, IEEE J. Solid-State Circuits, 1980
+ * @example =FOLD.INTERLEAVING(10, 12, 100, 4) =>
+ *   Kind | Multiple | Folded low | Folded high | Gap
+ *   image | 1 | 35 | 37 | 23
+ *   image | 2 | 38 | 40 | 26
+ *   image | 3 | 13 | 15 | 1
+ *   offset | 1 | 25 | 25 | 13
+ *   offset | 2 | 50 | 50 | 38
  */
 export function interleaving(low: any[][], high: any[][], rate: any[][], cores: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Kind', 'Multiple', 'Folded low', 'Folded high', 'Gap'], () =>
@@ -47,6 +63,13 @@ export function interleaving(low: any[][], high: any[][], rate: any[][], cores: 
  * @param {any[][]} [n] Highest multiple of the oscillator (default 3)
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} m, n, Low, High, Folded low, Folded high
+ * @formula m·band ± n·oscillator, folded
+ * @source common practice of mixer charts
+ * @example =FOLD.MIXING(10, 12, 100, 250, 1, 1) =>
+ *   m | n | Low | High | Folded low | Folded high
+ *   0 | 1 | 100 | 100 | 100 | 100
+ *   1 | -1 | 88 | 90 | 88 | 90
+ *   1 | 1 | 110 | 112 | 110 | 112
  */
 export function mixing(low: any[][], high: any[][], oscillator: any[][], rate: any[][], m?: any[][], n?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['m', 'n', 'Low', 'High', 'Folded low', 'Folded high'], () =>
@@ -63,6 +86,14 @@ export function mixing(low: any[][], high: any[][], oscillator: any[][], rate: a
  * @param {any[][]} [order] Highest sum of the multipliers (default 3)
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Product, Order, Frequency, Folded
+ * @formula Σ kᵢ·fᵢ with Σ|kᵢ| from 2 to the order, folded
+ * @source Kester (ed.), The Data Conversion Handbook
+ * @example =FOLD.INTERMOD({5;6}, 16, 2) =>
+ *   Product | Order | Frequency | Folded
+ *   f2-f1 | 2 | 1 | 1
+ *   2·f1 | 2 | 10 | 6
+ *   f1+f2 | 2 | 11 | 5
+ *   2·f2 | 2 | 12 | 4
  */
 export function intermod(frequencies: any[][], rate: any[][], order?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Product', 'Order', 'Frequency', 'Folded'], () =>
@@ -82,6 +113,12 @@ export function intermod(frequencies: any[][], rate: any[][], order?: any[][], h
  * @param {any[][]} [name] Names of the tones
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Product, Order, Frequency, Miss
+ * @formula the products Σ kᵢ·fᵢ, with the cores' images and tones, that land within the tolerance; lower orders first
+ * @source as INTERMOD and INTERLEAVING
+ * @example =FOLD.SOURCES(6, 20, {7;4}, 3, 0.5, 2, {"carrier";"clock"}) =>
+ *   Product | Order | Frequency | Miss
+ *   clock image 1/2 | 1 | 14 | 0
+ *   2·carrier | 2 | 14 | 0
  */
 export function sources(observed: any[][], rate: any[][], tones: any[][], order?: any[][], tolerance?: any[][], cores?: any[][], name?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Product', 'Order', 'Frequency', 'Miss'], () => {
@@ -103,6 +140,13 @@ export function sources(observed: any[][], rate: any[][], tones: any[][], order?
  * @param {any[][]} [hold] "nrz" (default), "rz" or "doublet"
  * @param {any[][]} [headers] FALSE leaves the header row out
  * @returns {any[][]} Zone, Low, High, Inverted, Level dB (blank where nothing is left)
+ * @formula k·fs ± band; the level is that of DROOP at the centre
+ * @source Kester (ed.), The Data Conversion Handbook
+ * @example =FOLD.DACIMAGES(10, 20, 100, 3) =>
+ *   Zone | Low | High | Inverted | Level dB
+ *   1 | 10 | 20 | FALSE | -0.323887337936199
+ *   2 | 80 | 90 | TRUE | -15.3904406711084
+ *   3 | 110 | 120 | FALSE | -18.0160189638948
  */
 export function dacimages(low: any[][], high: any[][], rate: any[][], zones?: any[][], hold?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Zone', 'Low', 'High', 'Inverted', 'Level dB'], () =>
