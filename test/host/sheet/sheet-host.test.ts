@@ -1,17 +1,22 @@
-import { type Workbook as UniverWorkbook, Direction, ICommandService, IUniverInstanceService, UndoCommand, UniverInstanceType } from '@univerjs/core';
+import { type Workbook as UniverWorkbook, Direction, ICommandService, IUniverInstanceService, RedoCommand, UndoCommand, UniverInstanceType } from '@univerjs/core';
 import { InsertDefinedNameCommand, InsertRowCommand, RemoveDefinedNameCommand, RemoveRowCommand, SetDefinedNameCommand, SetWorksheetNameCommand } from '@univerjs/sheets';
 import { afterEach, describe, expect, it } from 'vitest';
 import { openHeadless } from '../../../src/host/sheet/headless';
 import type { SheetHost } from '../../../src/host/sheet/sheet-host';
-import type { CellInput, Workbook } from '../../../src/host/port';
+import { type CellInput, type Change, type Workbook, HostFault } from '../../../src/host/port';
 import { coastPlan } from '../../../src/demo/coast';
 import { built } from '../../support/built-functions';
-import { testHost } from '../../support/host-contract';
+import { testHost, testLiveHost } from '../../support/host-contract';
 import { planOf } from '../../support/workbook';
 
 testHost('the embedded sheet', async (workbook) => {
   const host = await open(workbook);
   return { host, settle: () => host.settled(), close: async () => host.dispose() };
+});
+
+testLiveHost('the embedded sheet', async (workbook) => {
+  const host = await open(workbook);
+  return { host, state: () => host.save(), settle: () => host.settled(), close: async () => host.dispose() };
 });
 
 async function open(workbook: Workbook): Promise<SheetHost> {
@@ -126,6 +131,106 @@ describe('the embedded sheet', () => {
   });
 });
 
+describe('a change of the embedded sheet', () => {
+  let host: SheetHost;
+  afterEach(() => host.dispose());
+
+  const change: Change = {
+    sheets: [{ name: 'Copy', copyOf: 'Plan' }],
+    cells: [{ reference: 'Plan!B1:B2', cells: [['Folded'], [{ formula: '=FOLD.FREQ(A2:A3,Rate)' }]] }, { reference: 'Copy!A2', cells: [[80]] }],
+    looks: [{ reference: 'Plan!B1:B3', look: { numberFormat: '0.00', bold: true, width: 99, note: 'MHz', marksNegative: true } }],
+    names: { Rate: 'Plan!$C$2', Fold_Rate: 'Plan!$C$2' },
+  };
+  const history = async (command: { id: string }) => {
+    const unit = host.univer.__getInjector().get(IUniverInstanceService);
+    unit.focusUnit(unit.getCurrentUnitOfType(UniverInstanceType.UNIVER_SHEET)!.getUnitId());
+    await host.univer.__getInjector().get(ICommandService).executeCommand(command.id);
+    await host.settled();
+  };
+  const start = async () => {
+    host = await open(planOf([['Low', null, 100], [70, null, 50], [130]], { Rate: 'Plan!$C$1' }));
+    return host.save();
+  };
+
+  it('is one step of the user\'s undo and redo, sheets and names included', async () => {
+    const before = await start();
+    await host.change(change);
+    await host.settled();
+    const after = host.save();
+    expect((await host.read('Plan!B1:B3'))?.values).toEqual([['Folded'], [20], [20]]);
+    await history(UndoCommand);
+    expect(host.save()).toEqual(before);
+    await history(RedoCommand);
+    expect(host.save()).toEqual(after);
+  });
+
+  it('comes again when the user takes its undo back', async () => {
+    const before = await start();
+    const undo = await host.change(change);
+    await host.settled();
+    const after = host.save();
+    await undo();
+    await host.settled();
+    expect(host.save()).toEqual(before);
+    await history(UndoCommand);
+    expect(host.save()).toEqual(after);
+  });
+
+  it('leaves nothing in the user\'s undo when it fails', async () => {
+    const before = await start();
+    await host.write('A2', [[90]]);
+    await expect(host.change({ ...change, looks: [{ reference: 'Fold_Nothing', look: { bold: true } }] })).rejects.toThrow(HostFault);
+    await history(UndoCommand);
+    expect(host.save()).toEqual(before);
+  });
+
+  it('sets looks that are saved, and copies them with their sheet', async () => {
+    await start();
+    await host.change(change);
+    await host.change({ sheets: [{ name: 'Second', copyOf: 'Plan' }] });
+    const [plan, , second] = host.save().sheets;
+    expect(plan).toMatchObject({ columns: { 1: { width: 99 } }, notes: { B1: 'MHz' }, marksNegative: ['B1:B3'] });
+    expect(plan!.cells[1]![1]).toMatchObject({ formula: '=FOLD.FREQ(A2:A3,Rate)', style: { numberFormat: '0.00', bold: true } });
+    expect(second).toMatchObject({ columns: { 1: { width: 99 } }, notes: { B1: 'MHz' }, marksNegative: ['B1:B3'] });
+  });
+
+  it('makes no text of numbers in a format for text', async () => {
+    await start();
+    const undo = await host.change({ looks: [{ reference: 'Plan!A1:C3', look: { numberFormat: '@' } }] });
+    expect((await host.read('A2:C2'))?.values).toEqual([[70, null, 50]]);
+    await undo();
+    expect((await host.read('A2:C2'))?.values).toEqual([[70, null, 50]]);
+  });
+
+  it('takes back a look without the values of that time', async () => {
+    host = await open(planOf([[70, '=FOLD.FREQ(A1,Rate)', 100]], { Rate: 'Plan!$C$1' }));
+    const undo = await host.change({ looks: [{ reference: 'Plan!B1', look: { numberFormat: '0.000' } }] });
+    await host.write('Rate', [[50]]);
+    await host.settled();
+    await undo();
+    await host.settled();
+    expect(host.save().sheets[0]!.cells[0]![1]).toEqual({ value: 20, formula: '=FOLD.FREQ(A1,Rate)' });
+  });
+
+  it.each<[string, Change, string]>([
+    ['a table',           { tableColumns: [{ table: 'Bands', cells: [['Zone']] }] },         'There is no table called Bands: the sheet of the workbench knows no tables.'],
+    ['a sheet twice',     { sheets: [{ name: 'New' }, { name: 'new' }] },                    'The workbook has a sheet called new already.'],
+    ['a slash in a name', { sheets: [{ name: 'In/Out' }] },                                  'A sheet can\'t be called "In/Out": a name has 1 to 31 characters, none of them [ ] : * ? / \\, and no \' at an end.'],
+    ['another size',      { cells: [{ reference: 'Plan!A1:B2', cells: [[1, 2], [3]] }] },    'Plan!A1:B2 has 2 × 2 cells; got 2 × 1.'],
+    ['no number',         { cells: [{ reference: 'Plan!A1', cells: [[Infinity]] }] },        'Plan!A1 was not written: no cell can hold Infinity.'],
+    ['nowhere',           { looks: [{ reference: 'Fold_Nothing', look: {} }] },              'The workbook has no name, sheet or cells called Fold_Nothing.'],
+  ])('is refused in one clear sentence: %s', async (_what, refused, sentence) => {
+    await start();
+    await expect(host.change(refused)).rejects.toThrow(new HostFault(sentence));
+  });
+
+  it('has no place for pictures, and says so', async () => {
+    await start();
+    await expect(host.addPicture()).rejects.toThrow(new HostFault(host.cannot.addPicture));
+    expect(await host.tables()).toEqual([]);
+  });
+});
+
 describe('names in the embedded sheet', () => {
   let host: SheetHost;
   afterEach(() => host.dispose());
@@ -183,7 +288,7 @@ describe('a workbook loaded into the embedded sheet and saved from it', () => {
     return result;
   };
 
-  it('is the same: values, formulas, styles, sizes, merges, frozen panes, names', async () => {
+  it('is the same: values, formulas, styles, sizes, merges, frozen panes, notes, marks, names', async () => {
     const border = { style: 'thin', color: '#41616f' } as const;
     const workbook = planOf([
       [{ value: 'Title', style: { bold: true, italic: true, underline: true, strike: true, fontName: 'Georgia', fontSize: 14, color: '#102030', fill: '#dfe9ee' } }],
@@ -195,7 +300,7 @@ describe('a workbook loaded into the embedded sheet and saved from it', () => {
     ], { Rate: 'Plan!$C$2', Fold_Low: 'Plan!$A$2:$A$9' });
     Object.assign(workbook.sheets[0]!, {
       columns: { 0: { width: 120 }, 3: { width: 64, hidden: true }, 5: { hidden: true } }, rows: { 0: { height: 31 }, 7: { hidden: true } }, merges: ['A1:C1', 'A5:B6'],
-      frozen: { rows: 1, columns: 2 },
+      frozen: { rows: 1, columns: 2 }, notes: { A1: 'one line\nand another', B7: '=1' }, marksNegative: ['B2:B9', 'D1'],
     });
     workbook.sheets[0]!.cells[1]![1]!.value = 30;
     expect(await saved(workbook)).toEqual(workbook);
