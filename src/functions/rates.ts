@@ -84,7 +84,10 @@ export function tolerance(low: any[][], high: any[][], rate: any[][], guard?: an
  * @source the rule of bandpass sampling, applied to sums and differences of bands
  * @example =FOLD.PLANRATES({10;60}, {12;62}, {"wanted";"unwanted"}, 30, 100, 0.5) =>
  *   Lowest rate | Highest rate | Width | Centre | Headroom ppm
- *   100 | 200 | 100 | 150 | 333333.333333333
+ *   30 | 34.75 | 4.75 | 32.375 | 73359.0733590733
+ *   37.25 | 47.5 | 10.25 | 42.375 | 120943.952802359
+ *   52.5 | 69.5 | 17 | 61 | 139344.262295081
+ *   74.5 | 100 | 25.5 | 87.25 | 146131.805157593
  */
 export function planrates(low: any[][], high: any[][], role?: any[][], from?: any[][], to?: any[][], guard?: any[][], ppm?: any[][], harmonics?: any[][], cores?: any[][], sampling?: any[][], headers?: any[][]): any[][] {
   return table(headerRow(headers), ['Lowest rate', 'Highest rate', 'Width', 'Centre', 'Headroom ppm'], () =>

@@ -101,7 +101,7 @@ body { margin: 0 auto; max-width: 54rem; padding: 1.5rem 1rem 4rem; background: 
 a { color: var(--link); }
 h1 { margin: 0; font-size: 1.6rem; }
 h2 { margin: 0 0 .4rem; font-size: 1rem; overflow-wrap: anywhere; }
-h3 { margin: .9rem 0 0; color: var(--soft); font-size: .8rem; font-weight: 600; }
+h3 { margin: .9rem 0 0; color: var(--soft); font-size: .8rem; font-weight: 700; }
 nav h2 { margin: .8rem 0 0; color: var(--soft); font-size: .85rem; font-weight: 400; }
 nav ul { display: flex; flex-wrap: wrap; gap: .1rem 1rem; margin: 0; padding: 0; list-style: none; }
 form { display: flex; flex-wrap: wrap; align-items: baseline; gap: .3rem .8rem; position: sticky; top: 0; padding: .6rem 0; background: var(--paper); }
@@ -115,9 +115,9 @@ code { font-family: ui-monospace, Consolas, monospace; font-size: .95em; }
 .table { overflow-x: auto; }
 table { border-collapse: collapse; font-size: .9rem; font-variant-numeric: tabular-nums; }
 th, td { padding: .15rem .8rem .15rem 0; border-bottom: 1px solid var(--line); text-align: left; white-space: nowrap; }
-th { color: var(--soft); font-weight: 600; }
+th { color: var(--soft); font-weight: 700; }
 dl { display: grid; grid-template-columns: minmax(6rem, max-content) 1fr; gap: .25rem 1.2rem; margin: .6rem 0 0; }
-dt { font-weight: 600; }
+dt { font-weight: 700; }
 dt span { color: var(--soft); font-size: .8rem; font-weight: 400; }
 dd { margin: 0; }
 .sentences { display: block; }
