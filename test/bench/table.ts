@@ -25,6 +25,15 @@ export function race(rounds: number, alternatives: Record<string, () => unknown>
 
 /** Rows as the table that the README shows. */
 export function markdown(rows: readonly Row[]): string {
-  const lines = rows.map(({ what, ms, ratio, comparedWith }) => `| ${what} | ${ms.toFixed(ms < 10 ? 2 : 0)} ms | ${ratio === null ? '' : `${ratio.toFixed(2)} × ${comparedWith}`} |`);
+  const lines = rows.map(({ what, ms, ratio, comparedWith }) => `| ${what} | ${duration(ms)} | ${ratio === null ? '' : `${figure(ratio)} × ${comparedWith}`} |`);
   return ['| what | time | ratio |', '| --- | --- | --- |', ...lines].join('\n');
 }
+
+function duration(ms: number): string {
+  if (ms < 10) return `${ms.toFixed(2)} ms`;
+  if (ms < 10_000) return `${ms.toFixed(0)} ms`;
+  return ms < 7_200_000 ? `${figure(ms / 1000)} s` : `${figure(ms / 3_600_000)} h`;
+}
+
+/** Large numbers to two digits: more would be noise. */
+export const figure = (x: number): string => (x < 100 ? x.toFixed(2) : Number(x.toPrecision(2)).toLocaleString('en-US').replaceAll(',', ' '));

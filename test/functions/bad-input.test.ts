@@ -2,7 +2,8 @@
 // argument, shows the value and says what is accepted.
 
 import { describe, expect, it } from 'vitest';
-import { FULL_CALLS, type Given, built, call } from '../support/built-functions';
+import { built, call } from '../support/built-functions';
+import { FULL_CALLS, type Given } from '../support/full-calls';
 
 /** A number is asked for. */
 const notNumbers = (name: string): [Given, string][] => [

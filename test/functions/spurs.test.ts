@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { FULL_CALLS, call } from '../support/built-functions';
+import { call } from '../support/built-functions';
+import { FULL_CALLS } from '../support/full-calls';
 
 describe('table functions of the spurs family', () => {
   it.each([
