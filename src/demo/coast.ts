@@ -3,6 +3,7 @@
 
 import type { Sheet, Workbook } from '../host/port';
 import { FREQUENCY, HEADER, INPUT, type Line, NOTE, NUMBER_HEADER, TITLE, blanks, formula, look, sheet, styled } from './cells';
+import { type BandOfPlan, planHeader, planLine } from './plan-lines';
 
 export function coastPlan(): Workbook {
   return {
@@ -22,7 +23,7 @@ export function coastPlan(): Workbook {
   };
 }
 
-const SIGNALS: [name: string, low: number, high: number, role: 'wanted' | 'unwanted'][] = [
+const SIGNALS: BandOfPlan[] = [
   ['Reference clock, 10 MHz', 10, 10, 'unwanted'],
   ['FM broadcasting', 87.5, 108, 'unwanted'],
   ['Airband voice', 117.975, 137, 'wanted'],
@@ -53,18 +54,9 @@ function planSheet(): Sheet {
   lines[3] = ['Sample rate', styled(409.6, { ...INPUT, numberFormat: '0.00####' }), 'MHz'];
   lines[4] = ['Guard', styled(0.02, { ...INPUT, numberFormat: '0.00####' }), 'MHz'];
   lines[5] = ['Clock tolerance', styled(20, INPUT), 'ppm'];
-  lines[FIRST - 1] = [
-    ...['Signal', 'Low', 'High', 'Role', 'Folded low', 'Folded high', 'Zone', 'Inverted', 'Margin', 'Check'].map((title, i) => styled(title, i === 0 || i === 3 || i === 9 ? HEADER : NUMBER_HEADER)),
-  ];
-  SIGNALS.forEach(([name, low, high, role], i) => {
-    const row = FIRST + i;
-    const band = `B${row},C${row},Rate`;
-    lines[row] = [
-      name, styled(low, FREQUENCY), styled(high, FREQUENCY), role,
-      formula(`=FOLD.LOW(${band})`, FREQUENCY), formula(`=FOLD.HIGH(${band})`, FREQUENCY),
-      formula(`=FOLD.ZONE((B${row}+C${row})/2,Rate)`), formula(`=FOLD.INVERTED((B${row}+C${row})/2,Rate)`, { horizontal: 'right' }),
-      formula(`=FOLD.MARGIN(${band},Guard,Ppm)`, FREQUENCY), formula(`=FOLD.CHECK(${band},Guard,Ppm)`),
-    ];
+  lines[FIRST - 1] = planHeader('Signal');
+  SIGNALS.forEach((signal, i) => {
+    lines[FIRST + i] = planLine(FIRST + i, signal);
   });
   return sheet('Plan', lines, [176, 84, 84, 76, 100, 104, 52, 76, 80, 112], { rows: FIRST - 1, columns: 0 });
 }

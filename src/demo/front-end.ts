@@ -3,6 +3,7 @@
 
 import type { Cell, Sheet, Workbook } from '../host/port';
 import { FREQUENCY, HEADER, INPUT, type Line, NOTE, NUMBER_HEADER, TITLE, formula, look, sheet, styled } from './cells';
+import { type BandOfPlan, planHeader, planLine } from './plan-lines';
 
 export function frontEnd(): Workbook {
   return {
@@ -17,7 +18,7 @@ export function frontEnd(): Workbook {
   };
 }
 
-const BANDS: [name: string, low: number, high: number, role: 'wanted' | 'unwanted'][] = [
+const BANDS: BandOfPlan[] = [
   ['Radiosondes', 400.15, 406, 'wanted'],
   ['Emergency services, downlink', 390, 395, 'unwanted'],
   ['Amateur radio, 70 cm', 430, 440, 'unwanted'],
@@ -39,16 +40,9 @@ function bandsSheet(): Sheet {
   lines[3] = ['Sample rate', styled(122.88, { ...INPUT, ...FREQUENCY }), 'MHz'];
   lines[4] = ['Guard', styled(1, { ...INPUT, ...FREQUENCY }), 'MHz'];
   lines[5] = ['Clock tolerance', styled(10, INPUT), 'ppm'];
-  lines[7] = ['Band', 'Low', 'High', 'Role', 'Folded low', 'Folded high', 'Zone', 'Inverted', 'Margin', 'Check'].map((title, i) => styled(title, [0, 3, 9].includes(i) ? HEADER : NUMBER_HEADER));
-  BANDS.forEach(([name, low, high, role], i) => {
-    const row = FIRST + i;
-    const band = `B${row},C${row},Rate`;
-    lines[row] = [
-      name, styled(low, FREQUENCY), styled(high, FREQUENCY), role,
-      formula(`=FOLD.LOW(${band})`, FREQUENCY), formula(`=FOLD.HIGH(${band})`, FREQUENCY),
-      formula(`=FOLD.ZONE((B${row}+C${row})/2,Rate)`), formula(`=FOLD.INVERTED((B${row}+C${row})/2,Rate)`, { horizontal: 'right' }),
-      formula(`=FOLD.MARGIN(${band},Guard,Ppm)`, FREQUENCY), formula(`=FOLD.CHECK(${band},Guard,Ppm)`),
-    ];
+  lines[FIRST - 1] = planHeader('Band');
+  BANDS.forEach((band, i) => {
+    lines[FIRST + i] = planLine(FIRST + i, band);
   });
   return sheet('Bands', lines, [200, 84, 84, 84, 96, 96, 52, 76, 84, 112], { rows: FIRST - 1, columns: 0 });
 }
