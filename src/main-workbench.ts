@@ -16,6 +16,9 @@ const XLSX = 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet'
 
 const demo = demoFor(new URLSearchParams(location.search).get('demo'));
 
+/** Put in by the build. */
+declare const FOLDPLAN_VERSION: string;
+
 /** The file that the sheet shows. */
 const current = { name: demo.name, unsaved: false };
 
@@ -44,7 +47,7 @@ async function start(): Promise<void> {
     page.complain(sentences.cannotStart);
     return;
   }
-  mountPane(host, page.pane).catch(() => page.complain(sentences.noPictures));
+  mountPane(host, page.pane, FOLDPLAN_VERSION).catch(() => page.complain(sentences.noPictures));
 }
 
 /** The contract of every host, loaded as a page loads it. */

@@ -1,56 +1,65 @@
-// The pane: follows the workbook through the host port and draws what it finds.
+// The pane: follows the workbook through the host port, and shows it in sections in the order of the job.
 
 import './pane.css';
-import { type Host, HostFault } from '../host/port';
+import { HostFault, type LiveHost, type Place } from '../host/port';
+import { parseAddress } from './address';
+import { columnsSection } from './columns';
+import { element, toDom } from './element';
 import { type PlanFigures, figuresOf } from './figures';
-import { ladderLayout } from './ladder/layout';
-import { ladderPicture } from './ladder/picture';
-import { headlineSection, noticeList, setUpSection, tableSection } from './page';
+import { headlineSection, noticeList } from './page';
+import { picturesSection } from './pictures';
 import { type Plan, readPlan } from './plan';
+import type { MakeSection, Section } from './section';
 import { sentences } from './sentences';
+import { planSection } from './setup';
 import { slot } from './slot';
-import { stepThroughBands } from './ladder/stepping';
-import { WHOLE } from './ladder/view';
+import { tabs } from './tabs';
 import { headline } from './words';
 
-/** Recalculations within this many milliseconds are read once. */
+/** In the order of the job. */
+const SECTIONS: MakeSection[] = [planSection, columnsSection, picturesSection];
+const PLAN = SECTIONS.indexOf(planSection);
+const PICTURES = SECTIONS.indexOf(picturesSection);
+
+/** Events within this many milliseconds are answered once. */
 const BURST = 30;
 
 /**
  * Draws the pane into an element and keeps it true to the workbook, until the returned function is called.
  * Colours follow the system; `data-theme="light"` or `"dark"` on the element, or above it, decides otherwise.
  */
-export async function mountPane(host: Host, root: HTMLElement): Promise<() => void> {
+export async function mountPane(host: LiveHost, root: HTMLElement, version: string): Promise<() => void> {
   const document = root.ownerDocument;
-  const view = document.defaultView!;
   const faults = slot(document, 'faults', { role: 'alert' });
+  const news = slot(document, 'news', { role: 'status' });
   const notices = slot(document, 'plan-notices');
   const glance = slot(document, 'glance');
-  const picture = slot(document, 'picture');
-  const figures = slot(document, 'rows');
-  const stepping = stepThroughBands(document, picture.place, () => {});
+
+  let shown: PlanFigures | null = null;
+  let selected: number | null = null;
+  const surroundings = { document, host, version, tell, refresh };
+  const sections = SECTIONS.map((make) => make(surroundings));
+  const frame = tabs(document, sentences.sections, sections, showSection);
+  const foot = toDom(document, element('p', { class: 'foot' }, element('a', { href: 'help.html', target: '_blank', rel: 'noopener' }, sentences.reference)));
   root.classList.add('foldplan');
-  root.replaceChildren(faults.place, notices.place, glance.place, stepping.readout, picture.place, figures.place);
+  root.replaceChildren(faults.place, notices.place, glance.place, frame.place, news.place, foot);
 
-  let drawn: PlanFigures | null = null;
-  let width = 0;
+  function inView(): Section | undefined {
+    return sections[frame.current()];
+  }
 
-  function draw(): void {
-    const able = drawn !== null && drawn.bands.length > 0 ? drawn : null;
-    const words = able && headline(able);
-    const layout = able && ladderLayout(able, width, WHOLE);
-    picture.show(layout ? [ladderPicture(layout, words!.verdict)] : []);
-    stepping.renew();
+  function showSection(): void {
+    if (shown) inView()?.show(shown, selected);
   }
 
   function show(plan: Plan): void {
-    if (drawn !== null && JSON.stringify(plan) === JSON.stringify(drawn.plan)) return;
-    drawn = figuresOf(plan);
-    const { rows, bands } = drawn;
-    notices.show(plan.missing.length > 0 ? [setUpSection(plan.missing)] : noticesOf(drawn));
-    glance.show(bands.length > 0 ? [headlineSection(headline(drawn))] : []);
-    figures.show(rows.length > 0 ? [tableSection(drawn)] : []);
-    draw();
+    if (shown === null || JSON.stringify(plan) !== JSON.stringify(shown.plan)) {
+      shown = figuresOf(plan);
+      notices.show(noticesOf(shown));
+      glance.show(shown.bands.length > 0 ? [headlineSection(headline(shown))] : []);
+    }
+    if (frame.current() < 0) frame.choose(plan.missing.length > 0 ? PLAN : PICTURES);
+    else showSection();
   }
 
   // Reads may overtake one another: what was asked later is newer.
@@ -59,24 +68,37 @@ export async function mountPane(host: Host, root: HTMLElement): Promise<() => vo
   async function refresh(): Promise<void> {
     const turn = ++asked;
     try {
-      const plan = await readPlan(host);
+      const [plan, selection] = await Promise.all([readPlan(host), host.selection()]);
       if (turn < answered) return;
       answered = turn;
+      selected = selectedRow(plan, selection);
       show(plan);
-      say([]);
+      unread = null;
     } catch (fault) {
       if (turn < answered) return;
       answered = turn;
       const message = fault instanceof HostFault ? fault.message : sentences.unreadable;
-      say([drawn === null ? message : sentences.lastPicture(message)]);
+      unread = shown === null ? message : sentences.lastPicture(message);
+      if (frame.current() < 0) frame.choose(PLAN);
       if (!(fault instanceof HostFault)) throw fault;
+    } finally {
+      showFaults();
     }
   }
 
+  // What is wrong now: with following the host, with the last reading, with what was last done.
   const lasting: string[] = [];
-  function say(passing: string[]): void {
-    const all = [...lasting, ...passing];
+  let unread: string | null = null;
+  let failure: string | null = null;
+  function showFaults(): void {
+    const all = [...lasting, ...(unread ? [unread] : []), ...(failure ? [failure] : [])];
     faults.show(all.length > 0 ? [noticeList(all)] : []);
+  }
+
+  function tell(sentence: string, kind: 'news' | 'fault'): void {
+    failure = kind === 'fault' && sentence !== '' ? sentence : null;
+    news.show(kind === 'news' && sentence !== '' ? [element('p', {}, sentence)] : []);
+    showFaults();
   }
 
   let waiting: ReturnType<typeof setTimeout> | undefined;
@@ -87,35 +109,39 @@ export async function mountPane(host: Host, root: HTMLElement): Promise<() => vo
     }, BURST);
   };
 
-  const sizes = new view.ResizeObserver(() => {
-    if (picture.place.clientWidth === width) return;
-    width = picture.place.clientWidth;
-    draw();
-  });
-  width = picture.place.clientWidth;
-  sizes.observe(picture.place);
-
-  const unfollow = await host.onRecalculated(follow).catch((fault: unknown) => {
-    if (!(fault instanceof HostFault)) throw fault;
-    lasting.push(sentences.followsNot(fault.message));
-    return async () => {};
-  });
+  const stops: (() => Promise<void>)[] = [];
+  for (const listen of [host.onRecalculated, host.onEdited, host.onSelected]) {
+    try {
+      stops.push(await listen.call(host, follow));
+    } catch (fault) {
+      if (!(fault instanceof HostFault)) throw fault;
+      const sentence = sentences.followsNot(fault.message);
+      if (!lasting.includes(sentence)) lasting.push(sentence);
+    }
+  }
   await refresh();
 
   return () => {
     answered = Infinity;
     clearTimeout(waiting);
-    sizes.disconnect();
-    void unfollow();
+    for (const stop of stops) void stop();
+    for (const section of sections) section.close();
     root.replaceChildren();
     root.classList.remove('foldplan');
   };
 }
 
+/** The row of the plan that the selection begins in. */
+function selectedRow({ table, rows }: Plan, selection: Place | null): number | null {
+  const box = selection && table && selection.sheet === table.sheet ? parseAddress(selection.address) : null;
+  const index = box ? box.row - table!.first : -1;
+  return rows.some((row) => row.index === index) ? index : null;
+}
+
 function noticesOf({ plan, rows, bands }: PlanFigures) {
   const all = [
     ...plan.notices,
-    ...(rows.length === 0 ? [sentences.noBands] : bands.length === 0 && plan.rate !== null ? [sentences.noneReadable] : []),
+    ...(plan.missing.length > 0 ? [] : rows.length === 0 ? [sentences.noBands] : bands.length === 0 && plan.rate !== null ? [sentences.noneReadable] : []),
     ...rows.flatMap(({ problem }) => (problem ? [problem] : [])),
   ];
   return all.length > 0 ? [noticeList(all)] : [];

@@ -1,36 +1,22 @@
-// The pane's sections as trees: what the plan lacks, the rate at a glance, the table of figures.
+// Parts of the pane as trees: notices, the rate at a glance, the table of figures.
 
 import { type Tree, element } from './element';
 import type { PlanFigures, RowFigures } from './figures';
 import { exactFigure } from './number-text';
-import type { NameOfPlan } from './sentences';
 import { sentences } from './sentences';
 import type { Headline } from './words';
-
-/** How many objections stand in view; the others are a click away. */
-const IN_VIEW = 5;
-
-/** What to name in the workbook before there is a plan. */
-export function setUpSection(missing: NameOfPlan[]): Tree {
-  return element('section', { class: 'set-up' },
-    element('p', {}, sentences.setUp),
-    element('ul', {}, ...missing.map((name) => element('li', {}, element('code', {}, name.name), sentences.setUpLine(name)))));
-}
 
 export function noticeList(notices: string[]): Tree {
   return element('ul', { class: 'notices' }, ...notices.map((notice) => element('li', {}, notice)));
 }
 
 export function headlineSection({ outcome, verdict, facts, objections, remarks }: Headline): Tree {
-  const line = (sentence: string) => element('li', {}, sentence);
-  const rest = objections.slice(IN_VIEW);
   return element('section', { class: 'headline', 'data-outcome': outcome },
     element('p', { class: 'verdict', role: 'status' }, verdict),
     ...remarks.map((remark) => element('p', { class: 'remark' }, remark)),
     element('dl', { class: 'facts' }, ...facts.map(({ what, figure }) => element('div', {}, element('dt', {}, what), element('dd', {}, figure)))),
-    ...(objections.length > 0 ? [element('ul', { class: 'objections' }, ...objections.slice(0, IN_VIEW).map(line))] : []),
-    ...(rest.length > 0
-      ? [element('details', { 'data-keep': 'objections' }, element('summary', {}, sentences.andMore(rest.length)), element('ul', { class: 'objections' }, ...rest.map(line)))]
+    ...(objections.length > 0
+      ? [element('details', { 'data-keep': 'objections' }, element('summary', {}, sentences.against(objections.length)), noticeList(objections))]
       : []));
 }
 

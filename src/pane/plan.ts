@@ -1,8 +1,10 @@
 // The plan as the workbook holds it, read through its defined names.
 
-import type { Block, CellValue, Host } from '../host/port';
+import type { Block, CellValue, LiveHost, Place } from '../host/port';
+import { addressOf, cellBox, parseAddress } from './address';
 import { exactFigure } from './number-text';
-import { type CellPlace, NAMES, type NameOfPlan, sentences } from './sentences';
+import { type CellPlace, NAMES, type NameKey, type NameOfPlan, sentences } from './sentences';
+import { type PlanTable, deletedAndOther, readTable } from './setup/table';
 
 export type Role = 'wanted' | 'unwanted';
 
@@ -10,11 +12,11 @@ export type Role = 'wanted' | 'unwanted';
 export interface PlanRow {
   /** Place in the columns, from 0. */
   index: number;
-  /** The cell of the low edge, as an address in its sheet. */
+  /** The cell of the low edge or the centre, as an address in its sheet. */
   place: string;
   name: string;
   role: Role;
-  /** The edges as they stand in the cells; null where there is no number. */
+  /** The edges as the cells give them; null where there is no number. */
   low: number | null;
   high: number | null;
   /** What is wrong with the row, in one sentence. */
@@ -24,41 +26,63 @@ export interface PlanRow {
 }
 
 export interface Plan {
-  /** Names without which there is nothing to draw. */
+  /** Names without which there is nothing to compute. */
   missing: NameOfPlan[];
+  /** Which columns give the edges of a band. */
+  edges: Edges;
   /** null where the cell holds no rate; a notice says why. */
   rate: number | null;
   guard: number;
   ppm: number;
   rows: PlanRow[];
+  /** Where the cells of each name are, without those of names that the workbook lacks. */
+  places: Places;
+  /** The plan as a table in its sheet, null where its columns don't lie side by side in the same rows. */
+  table: PlanTable | null;
   /** What is wrong with the plan as a whole, a sentence each. */
   notices: string[];
 }
 
+export type Edges = readonly ['low', 'high'] | readonly ['centre', 'width'];
+
+export type Places = Partial<Record<NameKey, Place>>;
+
 /** What the defined names of a plan stand for in a workbook; null for a name that it lacks. */
-export type PlanCells = Record<keyof typeof NAMES, Block | null>;
+export type PlanCells = Record<NameKey, Block | null>;
 
 /** @throws HostFault where the host can't read */
-export async function readPlan(host: Host): Promise<Plan> {
-  const keys = Object.keys(NAMES) as (keyof typeof NAMES)[];
-  const blocks = await Promise.all(keys.map((key) => host.read(NAMES[key].name)));
-  return planFrom(Object.fromEntries(keys.map((key, i) => [key, blocks[i]])) as PlanCells);
+export async function readPlan(host: LiveHost): Promise<Plan> {
+  const { gone, readable } = deletedAndOther(await host.names());
+  const blocks = await Promise.all(KEYS.map((key) => (readable.has(key) ? host.read(NAMES[key].name) : null)));
+  const plan = planFrom(Object.fromEntries(KEYS.map((key, i) => [key, blocks[i]])) as PlanCells);
+  const { table, notices } = await readTable(host, plan.edges, plan.places);
+  return { ...plan, table, notices: [...gone, ...plan.notices, ...notices] };
 }
 
-/** The plan that these cells make. Whatever is wrong becomes a sentence, and the rest stays. */
+/** The plan that these cells make, as far as they alone can tell. Whatever is wrong becomes a sentence, and the rest stays. */
 export function planFrom(cells: PlanCells): Plan {
   const notices: string[] = [];
-  const missing = (['low', 'high', 'rate'] as const).filter((key) => cells[key] === null).map((key) => NAMES[key]);
-  const plan: Plan = { missing, rate: null, guard: 0, ppm: 0, rows: [], notices };
-  if (missing.length > 0) return plan;
+  const edges: Edges = !(cells.low || cells.high) && (cells.centre || cells.width) ? ['centre', 'width'] : ['low', 'high'];
+  const missing = [...edges, 'rate' as const].filter((key) => cells[key] === null).map((key) => NAMES[key]);
+  const places = Object.fromEntries(KEYS.flatMap((key) => {
+    const block = cells[key];
+    return block ? [[key, { sheet: block.sheet, address: block.address }]] : [];
+  })) as Places;
+  const plan: Plan = { missing, edges, rate: null, guard: 0, ppm: 0, rows: [], places, table: null, notices };
+  if (missing.length > 0) {
+    if (Object.keys(places).length > 0) notices.push(sentences.missing(missing));
+    return plan;
+  }
   plan.rate = readRate(cells.rate!, notices);
   plan.guard = readAllowance(NAMES.guard, 'the guard', cells.guard, Infinity, sentences.guardRange, notices);
   plan.ppm = readAllowance(NAMES.ppm, 'the clock tolerance', cells.ppm, 1e6, sentences.ppmRange, notices);
   if (cells.guard === null) notices.push(sentences.noGuard);
   if (cells.name === null) notices.push(sentences.noNames);
-  plan.rows = readRows(cells, notices);
+  plan.rows = readRows(cells, edges, notices);
   return plan;
 }
+
+const KEYS = Object.keys(NAMES) as NameKey[];
 
 // Single cells
 
@@ -100,19 +124,18 @@ interface Column {
   placeOf(index: number): string;
 }
 
-function readRows(cells: PlanCells, notices: string[]): PlanRow[] {
-  const low = readColumn(NAMES.low, cells.low, notices);
-  const high = readColumn(NAMES.high, cells.high, notices);
-  if (!low || !high) return [];
+function readRows(cells: PlanCells, edges: Edges, notices: string[]): PlanRow[] {
+  const [one, other] = edges.map((key) => readColumn(NAMES[key], cells[key], notices));
+  if (!one || !other) return [];
   const names = readColumn(NAMES.name, cells.name, notices);
   const roles = readColumn(NAMES.role, cells.role, notices);
-  const lengths = ([['name', names], ['low', low], ['high', high], ['role', roles]] as const)
+  const lengths = ([['name', names], [edges[0], one], [edges[1], other], ['role', roles]] as const)
     .flatMap(([key, column]) => (column ? [{ name: NAMES[key].name, cells: column.values.length }] : []));
   if (new Set(lengths.map((column) => column.cells)).size > 1) notices.push(sentences.lengthsDiffer(lengths));
 
   const rows: PlanRow[] = [];
-  for (let index = 0; index < Math.max(low.values.length, high.values.length); index++) {
-    const row = readRow(index, low, high, names, roles);
+  for (let index = 0; index < Math.max(one.values.length, other.values.length); index++) {
+    const row = readRow(index, edges[0] === 'low' ? edgesOf(index, one, other) : edgesAround(index, one, other), names, roles);
     if (row) rows.push(row);
   }
   return rows;
@@ -128,26 +151,57 @@ function readColumn({ name }: NameOfPlan, block: Block | null, notices: string[]
   return null;
 }
 
-/** null for a row that is blank, holds two edges of 0 (some hosts deliver a blank cell so) or is ignored. */
-function readRow(index: number, lows: Column, highs: Column, names: Column | null, roles: Column | null): PlanRow | null {
-  const low = lows.values[index] ?? null;
-  const high = highs.values[index] ?? null;
-  if ((isBlank(low) || low === 0) && (isBlank(high) || high === 0)) return null;
-  const { role, problem: roleProblem } = readRole(roles, index);
-  if (role === 'ignore') return null;
+/** What the two cells of a row give. */
+interface RowEdges {
+  blank: boolean;
+  place: string;
+  low: number | null;
+  high: number | null;
+  problem: string | null;
+}
+
+function edgesOf(index: number, lows: Column, highs: Column): RowEdges {
+  const [low, high] = [lows.values[index] ?? null, highs.values[index] ?? null];
   const lowPlace: CellPlace = { place: lows.placeOf(index), what: 'the low edge' };
   const highPlace: CellPlace = { place: highs.placeOf(index), what: 'the high edge' };
-  const edgeProblem = badEdge(lowPlace, low) ?? badEdge(highPlace, high)
-    ?? ((low as number) > (high as number) ? sentences.edgesReversed(lowPlace, low as number, highPlace, high as number) : null);
   return {
-    index,
+    blank: isNothing(low) && isNothing(high),
     place: lowPlace.place,
-    name: shownName(names?.values[index] ?? null) || sentences.unnamed(lowPlace.place),
-    role,
     low: typeof low === 'number' ? low : null,
     high: typeof high === 'number' ? high : null,
-    problem: edgeProblem ?? roleProblem,
-    usable: edgeProblem === null,
+    problem: badEdge(lowPlace, low) ?? badEdge(highPlace, high)
+      ?? ((low as number) > (high as number) ? sentences.edgesReversed(lowPlace, low as number, highPlace, high as number) : null),
+  };
+}
+
+/** A centre without a width is a tone, as in the arithmetic of a sheet. */
+function edgesAround(index: number, centres: Column, widths: Column): RowEdges {
+  const [centre, width] = [centres.values[index] ?? null, widths.values[index] ?? null];
+  const centrePlace: CellPlace = { place: centres.placeOf(index), what: 'the centre' };
+  const widthPlace: CellPlace = { place: widths.placeOf(index), what: 'the width' };
+  const problem = badEdge(centrePlace, centre) ?? (isBlank(width) ? null : badEdge(widthPlace, width))
+    ?? (typeof width === 'number' && width < 0 ? sentences.widthNegative(widthPlace, width) : null);
+  const half = typeof width === 'number' ? width / 2 : 0;
+  const edge = (side: 1 | -1) => (problem === null ? rounded15((centre as number) + side * half) : null);
+  return { blank: isNothing(centre) && isNothing(width), place: centrePlace.place, low: edge(-1), high: edge(1), problem };
+}
+
+/** A sum of two cells as a worksheet function reads it: to 15 digits. */
+const rounded15 = (x: number): number => Number(x.toPrecision(15));
+
+/** Some hosts deliver a blank cell as 0, so a row of two zeros is blank. */
+const isNothing = (value: CellValue): boolean => isBlank(value) || value === 0;
+
+/** null for a row that is blank or ignored. */
+function readRow(index: number, { blank, place, low, high, problem }: RowEdges, names: Column | null, roles: Column | null): PlanRow | null {
+  if (blank) return null;
+  const { role, problem: roleProblem } = readRole(roles, index);
+  if (role === 'ignore') return null;
+  return {
+    index, place, role, low, high,
+    name: shownName(names?.values[index] ?? null) || sentences.unnamed(place),
+    problem: problem ?? roleProblem,
+    usable: problem === null,
   };
 }
 
@@ -194,15 +248,6 @@ const DIRECTION_CONTROLS = /[\u202a-\u202e\u2066-\u2069]/g;
 
 /** Address of a cell within a block: `B7`; where the block's own address can't be read, its place in words. */
 function placeOf({ address }: Block, down: number, right = 0): string {
-  const first = /^\$?([A-Z]{1,3})\$?(\d*)/i.exec(address);
-  if (!first) return `row ${down + 1}`;
-  return columnLetters(columnNumber(first[1]!) + right) + (Number(first[2] || 1) + down);
-}
-
-const columnNumber = (letters: string): number => [...letters.toUpperCase()].reduce((sum, letter) => sum * 26 + letter.charCodeAt(0) - 64, 0);
-
-function columnLetters(column: number): string {
-  let letters = '';
-  for (let rest = column; rest > 0; rest = Math.floor((rest - 1) / 26)) letters = String.fromCharCode(65 + ((rest - 1) % 26)) + letters;
-  return letters;
+  const box = parseAddress(address);
+  return box ? addressOf(cellBox(box.row + down, box.column + right)) : `row ${down + 1}`;
 }

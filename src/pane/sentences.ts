@@ -12,11 +12,16 @@ export const NAMES = {
   name: { name: 'Fold_Name', stands: 'the column of band names' },
   low: { name: 'Fold_Low', stands: 'the column of low edges' },
   high: { name: 'Fold_High', stands: 'the column of high edges' },
+  centre: { name: 'Fold_Centre', stands: 'the column of centres' },
+  width: { name: 'Fold_Width', stands: 'the column of widths' },
   role: { name: 'Fold_Role', stands: 'the column of roles (wanted, unwanted or ignore)' },
   rate: { name: 'Fold_Rate', stands: 'the cell with the sample rate' },
   guard: { name: 'Fold_Guard', stands: 'the cell with the guard' },
   ppm: { name: 'Fold_Ppm', stands: 'the cell with the clock tolerance in ppm' },
 } as const satisfies Record<string, NameOfPlan>;
+
+/** What a name of the plan is called in the program. */
+export type NameKey = keyof typeof NAMES;
 
 /** A cell for a sentence: where it is and what it stands for. */
 export interface CellPlace {
@@ -29,11 +34,11 @@ const at = ({ place, what }: CellPlace) => `${what} in ${place}`;
 export const sentences = {
   // The plan as a whole
 
-  setUp: 'This workbook has no plan that the pane can find yet. Give these cells a name (Formulas, Define name), and the picture appears here:',
-  setUpLine: ({ stands }: NameOfPlan) => ` for ${stands}`,
-  noNames: `No cells are named ${NAMES.name.name}, so bands are called by their row; give the column of band names that name.`,
-  noGuard: `No cell is named ${NAMES.guard.name}, so the guard is taken as 0; give the cell with the guard that name.`,
-  noBands: `${NAMES.low.name} and ${NAMES.high.name} hold no numbers yet; fill in the edges of a band, and the picture appears here.`,
+  noPlan: 'No plan is set up in this workbook yet: choose its cells under Plan.',
+  missing: (names: NameOfPlan[]) => `The plan lacks ${list(names.map(({ stands, name }) => `${stands} (${name})`))}; choose ${names.length === 1 ? 'it' : 'them'} under Plan.`,
+  noNames: 'No column of band names is chosen, so bands are called by their row; choose one under Plan.',
+  noGuard: 'No cell is chosen for the guard, so it is taken as 0; choose one under Plan.',
+  noBands: 'The plan holds no numbers yet; fill in the edges of a band, and the figures appear here.',
   noneReadable: 'No row of the plan can be drawn; the rows below say why.',
   notVector: (name: string, rows: number, columns: number) => `${name} must be one column; it is ${rows} rows by ${columns} columns.`,
   notSingle: (name: string, rows: number, columns: number) => `${name} must be one cell; it is ${rows} rows by ${columns} columns.`,
@@ -50,6 +55,7 @@ export const sentences = {
   blank: (cell: CellPlace) => `${upper(at(cell))} is blank.`,
   notNumber: (cell: CellPlace, value: string) => `${upper(at(cell))} must be a number; got ${value}.`,
   cellError: (cell: CellPlace, code: string, message: string | undefined) => `${upper(at(cell))} shows ${code}${message ? `: ${message}` : '.'}`,
+  widthNegative: (cell: CellPlace, value: number) => `${upper(at(cell))} must be 0 or more; got ${exactFigure(value)}.`,
   edgesReversed: (low: CellPlace, lowValue: number, high: CellPlace, highValue: number) =>
     `${upper(at(low))} must not be above ${at(high)}; got ${exactFigure(lowValue)} and ${exactFigure(highValue)}.`,
   unknownRole: (cell: CellPlace, value: string) => `${upper(at(cell))} must be wanted, unwanted or ignore; got ${value}. It is taken as wanted.`,
@@ -58,8 +64,15 @@ export const sentences = {
 
   // The host
 
-  followsNot: (message: string) => `${message} The picture does not follow the sheet.`,
-  lastPicture: (message: string) => `${message} The picture is the last one that could be read.`,
+  followsNot: (message: string) => `${message} The pane does not follow the sheet.`,
+  lastPicture: (message: string) => `${message} What is shown is the last that could be read.`,
+  failed: 'That did not work, and the reason is not known.',
+
+  // The frame
+
+  sections: 'Sections',
+  reference: 'All worksheet functions',
+  against: (count: number) => (count === 1 ? 'One thing speaks against it' : `${count} things speak against it`),
   unreadable: 'The plan could not be read.',
 
   // The rate in one line
@@ -144,5 +157,7 @@ export const isolated = (name: string): string => (RIGHT_TO_LEFT.test(name) ? `\
 const RIGHT_TO_LEFT = /[\u0590-\u08ff\u200f\ufb1d-\ufdff\ufe70-\ufefc]|[\u{10800}-\u{10fff}]|[\u{1e800}-\u{1efff}]/u;
 
 const range = (low: string, high: string) => (low === high ? low : `${low} to ${high}`);
+
+const list = (words: string[]) => (words.length < 2 ? words.join('') : `${words.slice(0, -1).join(', ')} and ${words.at(-1)}`);
 
 const upper = (sentence: string) => sentence.charAt(0).toUpperCase() + sentence.slice(1);
