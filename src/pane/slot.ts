@@ -9,7 +9,7 @@ export interface Slot {
 }
 
 /**
- * Makes an empty slot. Across redraws a row is known by its `data-row`, and a part that opens by its `data-keep`.
+ * Makes an empty slot. Across redraws a row is known by its `data-row`, and any other part that opens or has the focus by its `data-keep`.
  */
 export function slot(document: Document, className: string, attributes: Tree['attributes'] = {}): Slot {
   const place = toDom(document, { tag: 'div', attributes: { class: className, ...attributes }, children: [] }) as HTMLElement;
@@ -35,6 +35,8 @@ function focusedPart(document: Document, place: Element): string | null {
   if (!active || !place.contains(active)) return null;
   const row = active.getAttribute('data-row');
   if (row !== null) return `[data-row="${row}"]`;
+  const own = active.getAttribute('data-keep');
+  if (own !== null) return `[data-keep="${own}"]`;
   const kept = active.tagName.toLowerCase() === 'summary' ? active.parentElement?.getAttribute('data-keep') : null;
   return kept ? `[data-keep="${kept}"] > summary` : null;
 }

@@ -1,40 +1,68 @@
-// The section Pictures: the zone ladder and its figures as a table.
+// The section Pictures: the zone ladder, what speaks against the rate, the rate ruler, and the figures of all rows as a table.
 
+import './pictures.css';
+import { attempts } from '../attempt';
+import { element, toDom } from '../element';
 import type { PlanFigures } from '../figures';
-import { ladderLayout } from '../ladder/layout';
-import { ladderPicture } from '../ladder/picture';
-import { stepThroughBands } from '../ladder/stepping';
-import { WHOLE } from '../ladder/view';
+import { ladderPanel } from '../ladder/panel';
 import { tableSection } from '../page';
+import { rulerPanel } from '../ruler/panel';
 import type { MakeSection } from '../section';
 import { slot } from '../slot';
-import { headline } from '../words';
+import { box } from './buttons';
+import { conflictList } from './conflict-list';
+import { rowReference } from './rows';
+import { sentences } from './sentences';
 
-export const picturesSection: MakeSection = ({ document }) => {
-  const place = document.createElement('div');
-  const picture = slot(document, 'picture');
-  const figures = slot(document, 'rows');
-  const stepping = stepThroughBands(document, picture.place, () => {});
-  place.append(stepping.readout, picture.place, figures.place);
+export const picturesSection: MakeSection = (surroundings) => {
+  const { document, host } = surroundings;
+  const attempt = attempts(surroundings);
+  const empty = toDom(document, element('p', { class: 'quiet' }, sentences.noPictures)) as HTMLElement;
+  const conflicts = slot(document, 'conflicts-list');
+  const conflictsPart = toDom(document, element('section', {}, element('h2', {}, sentences.conflictsHeading))) as HTMLElement;
+  conflictsPart.append(conflicts.place);
+  const rows = slot(document, 'rows');
 
-  let drawn: PlanFigures | null = null;
-  function draw(): void {
-    const able = drawn !== null && drawn.bands.length > 0 ? drawn : null;
-    const layout = able && ladderLayout(able, picture.place.clientWidth, WHOLE);
-    picture.show(layout ? [ladderPicture(layout, headline(able!).verdict)] : []);
-    stepping.renew();
+  let figures: PlanFigures | null = null;
+  const pick = (row: number) => {
+    const reference = figures && rowReference(figures.plan, row);
+    if (reference) void attempt(() => host.select(reference));
+  };
+  conflicts.place.addEventListener('click', (event) => {
+    const row = (event.target as Element).closest('[data-row]')?.getAttribute('data-row');
+    if (row) pick(Number(row));
+  });
+
+  const ladder = ladderPanel(surroundings, pick);
+  const ruler = rulerPanel(surroundings, (rate, rules, standing) => conflicts.show(conflictList(standing, rate, rules)));
+  const place = box(document, { class: 'pictures' });
+  place.append(empty, ladder.place, conflictsPart, ruler.place, rows.place);
+
+  // A section out of view has no size.
+  const sizes = new document.defaultView!.ResizeObserver(resize);
+  function resize(): void {
+    ladder.resize(place.clientWidth);
+    ruler.resize(place.clientWidth);
   }
-  const sizes = new document.defaultView!.ResizeObserver(draw);
-  sizes.observe(picture.place);
+  sizes.observe(place);
 
   return {
-    title: 'Pictures',
+    title: sentences.title,
     place,
-    show(now) {
-      drawn = now;
-      figures.show(now.rows.length > 0 ? [tableSection(now)] : []);
-      draw();
+    show(now, selected) {
+      figures = now;
+      const able = now.bands.length > 0 ? now : null;
+      empty.hidden = able !== null;
+      conflictsPart.hidden = able === null;
+      resize();
+      ladder.show(able, selected);
+      ruler.show(able);
+      rows.show(now.rows.length > 0 ? [tableSection(now)] : []);
     },
-    close: () => sizes.disconnect(),
+    close() {
+      sizes.disconnect();
+      ladder.close();
+      ruler.close();
+    },
   };
 };

@@ -9,7 +9,7 @@ export type GivenRow = [name: string, low: number, high: number, role?: Role];
 export function planOf(rows: GivenRow[], { rate = 245.76, guard = 0, ppm = 0 } = {}): Plan {
   return {
     missing: [], edges: ['low', 'high'], rate, guard, ppm, places: {}, table: null, notices: [],
-    rows: rows.map(([name, low, high, role = 'wanted'], index) => ({ index, place: `B${index + 2}`, name, role, low, high, problem: null, usable: true })),
+    rows: rows.map(([name, low, high, role = 'wanted'], index) => ({ index, place: `B${index + 2}`, name, role, low, high, centre: null, problem: null, usable: true })),
   };
 }
 
