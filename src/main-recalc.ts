@@ -1,22 +1,28 @@
-// The command line: recalculates the FOLD formulas of a workbook file, and what depends on them.
+// The command line: recalculates the FOLD formulas of a workbook file, and what depends on them; and makes a plain copy of it.
 
 import { randomBytes } from 'node:crypto';
+import { rmSync } from 'node:fs';
 import { open, readFile, realpath, rename, rm, stat } from 'node:fs/promises';
 import path from 'node:path';
+import { setImmediate } from 'node:timers/promises';
 import { parseArgs } from 'node:util';
 import { type Calculator, type Recalculated, WorkbookFile } from './host/file';
 import { type CellInput, HostFault } from './host/port';
 import { calculate } from './host/sheet/calculate';
 import { type WorksheetFunctions, loadFunctions } from './host/sheet/functions-runtime';
 import { unknownParts } from './host/sheet/known-functions';
+import { type PlainCopy, plainCopy } from './plain';
 
 const HELP = `Recalculates the FOLD formulas of a workbook, and the other formulas that depend on them.
 
-  npm run recalc -- plan.xlsx --out done.xlsx [--set Rate=100]...
+  npm run recalc -- plan.xlsx --out done.xlsx [--set Rate=100]... [--plain]
 
   --out FILE              where the result goes; it may be the workbook itself, which is then replaced as a whole
   --set NAME=VALUE        puts a value into a cell first; NAME is a defined name or an address: Rate, Plan!B2, 'My plan'!B2.
                           VALUE is a number, TRUE, FALSE, or else text; nothing after "=" empties the cell. May be repeated.
+  --plain                 makes a plain copy, for programs without Foldplan: after the recalculation each FOLD formula becomes a native formula
+                          with the same results where there is one, else its value. A new last sheet lists what became what. FILE has to
+                          be another file than the workbook, which is not touched
   --help                  shows this
 
 What is computed: every formula that calls a FOLD function or has no value yet, and every formula that depends on one of those or on
@@ -27,7 +33,7 @@ A FOLD formula that needs more cells becomes one that spills. It never covers ot
 which the file holds as #VALUE!, as spreadsheet programs write it.
 
 Exit code: 0, or 1 where a FOLD cell shows an error or could not be computed (each is listed on standard error; the result is written),
-or 2 where nothing was written: the workbook can't be read, an option is wrong, or --set names no cell.
+or 2 where nothing was written: the workbook can't be read, an option is wrong, or --set names no cell. A run that is stopped leaves nothing.
 `;
 
 /** Nothing can be written, for a reason that is the user's to know. */
@@ -37,6 +43,7 @@ interface Job {
   input: string;
   output: string;
   settings: { reference: string; value: CellInput }[];
+  plain: boolean;
 }
 
 async function run(args: string[]): Promise<number> {
@@ -49,7 +56,8 @@ async function run(args: string[]): Promise<number> {
   }
 }
 
-async function recalculate({ input, output, settings }: Job): Promise<number> {
+async function recalculate({ input, output, settings, plain }: Job): Promise<number> {
+  if (plain && await isSameFile(input, output)) throw new Refusal('A plain copy is another file than the workbook: give --out another name.');
   const functions = await builtFunctions();
   const progress = new Progress();
   const calculator: Calculator = {
@@ -60,9 +68,27 @@ async function recalculate({ input, output, settings }: Job): Promise<number> {
   const file = await refusing(input, () => WorkbookFile.open(bytes));
   for (const { reference, value } of settings) await set(file, reference, value);
   const result = await file.recalculate(calculator);
+  const copy = plain ? await makePlain(file, progress) : null;
   progress.end();
   await refusing(output, async () => replaceFile(output, await file.save()));
-  return report(result);
+  const code = report(result);
+  if (copy) reportPlain(copy);
+  return code;
+}
+
+async function makePlain(file: WorkbookFile, progress: Progress): Promise<PlainCopy> {
+  const { version } = JSON.parse(await readFile(path.join(__dirname, '../package.json'), 'utf8')) as { version: string };
+  const copy = await plainCopy(await file.formulas(), { version, date: new Date().toISOString().slice(0, 10) }, async (done, total) => {
+    progress.tell(`Looked at ${done} of ${total} formulas`);
+    await setImmediate(); // lets a signal through
+  });
+  await file.replaceFormulas(copy);
+  return copy;
+}
+
+function reportPlain({ counts, sheet }: PlainCopy): void {
+  for (const { sheet: name, formulas, values } of counts) tell(`${name}: ${count(formulas, 'FOLD formula')} made native, ${count(values, 'other')} made values`);
+  tell(`The sheet ${JSON.stringify(sheet.name)} lists them.`);
 }
 
 function report({ sheets, errors, kept }: Recalculated): number {
@@ -100,7 +126,7 @@ function readArguments(args: string[]): Job | 'help' {
   if (kind(input) && kind(output) && kind(input) !== kind(output)) {
     throw new Refusal(`The result is a file of the same kind as the workbook: give it a name that ends with ${kind(input)}.`);
   }
-  return { input, output, settings: (values.set ?? []).map(readSetting) };
+  return { input, output, settings: (values.set ?? []).map(readSetting), plain: values.plain ?? false };
 }
 
 function parsed(args: string[]) {
@@ -108,7 +134,7 @@ function parsed(args: string[]) {
     return parseArgs({
       args,
       allowPositionals: true,
-      options: { out: { type: 'string', multiple: true }, set: { type: 'string', multiple: true }, help: { type: 'boolean', short: 'h' } },
+      options: { out: { type: 'string', multiple: true }, set: { type: 'string', multiple: true }, plain: { type: 'boolean' }, help: { type: 'boolean', short: 'h' } },
     });
   } catch (error) {
     throw new Refusal(`${(error as Error).message.split(/\.\s|\n/)[0]}. --help shows what is possible.`);
@@ -140,12 +166,21 @@ async function builtFunctions(): Promise<WorksheetFunctions> {
   return loadFunctions(JSON.parse(await text('functions.json')), await text('functions.js'));
 }
 
+async function isSameFile(one: string, other: string): Promise<boolean> {
+  const [a, b] = await Promise.all([one, other].map((file) => realpath(file).catch(() => path.resolve(file))));
+  return a === b;
+}
+
+/** A file that is not yet whole. */
+let unfinished: string | null = null;
+
 /** The file is replaced as a whole or not at all. */
 async function replaceFile(file: string, bytes: Uint8Array): Promise<void> {
   const target = await realpath(file).catch(() => file);
   const before = await stat(target).catch(() => null);
   if (before?.isDirectory()) throw Object.assign(new Error(), { code: 'EISDIR' });
   const beside = path.join(path.dirname(target), `.${path.basename(target)}.${randomBytes(6).toString('hex')}`);
+  unfinished = beside;
   try {
     const handle = await open(beside, 'wx', before ? before.mode : 0o666);
     try {
@@ -158,6 +193,8 @@ async function replaceFile(file: string, bytes: Uint8Array): Promise<void> {
   } catch (error) {
     await rm(beside, { force: true });
     throw error;
+  } finally {
+    unfinished = null;
   }
 }
 
@@ -209,6 +246,13 @@ class Progress {
   end(): void {
     if (this.#terminal && this.#shown) process.stderr.write('\r\x1b[K');
   }
+}
+
+for (const [signal, code] of [['SIGINT', 130], ['SIGTERM', 143]] as const) {
+  process.once(signal, () => {
+    if (unfinished !== null) rmSync(unfinished, { force: true });
+    process.exit(code);
+  });
 }
 
 void run(process.argv.slice(2)).then((code) => {

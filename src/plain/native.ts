@@ -1,5 +1,7 @@
 // Native formulas as text: what the equivalents of all families are made of. Only functions that every spreadsheet program has.
 
+import { reasons } from './sentences';
+
 /** An argument of a call, ready to stand anywhere in a formula. */
 export interface Expression {
   /** In parentheses where it is more than one term; empty where the argument is left out. */
@@ -39,7 +41,7 @@ const isLeftOut = ({ text, literal }: Expression): boolean => text === '' || lit
 
 /** Holds where every argument is a number. Arguments written as text are no numbers, although native formulas take them for such. */
 export function areNumbers(...args: Expression[]): Condition {
-  for (const { text, literal } of args) if (text === '' || typeof literal === 'string') throw new NoEquivalent('an argument is no number');
+  for (const { text, literal } of args) if (text === '' || typeof literal === 'string') throw new NoEquivalent(reasons.notNumber);
   const open = args.filter(({ literal }) => literal === undefined).map(({ text }) => text);
   return open.length === 0 ? null : `COUNT(${open.join(',')})=${open.length}`;
 }
@@ -48,14 +50,14 @@ export function areNumbers(...args: Expression[]): Condition {
 export function compares({ text, literal }: Expression, sign: '>' | '>=' | '<', bound: number): Condition {
   if (typeof literal !== 'number') return `${text}${sign}${bound}`;
   if (sign === '>' ? literal > bound : sign === '<' ? literal < bound : literal >= bound) return null;
-  throw new NoEquivalent('an argument is out of range');
+  throw new NoEquivalent(reasons.outOfRange);
 }
 
 /** Holds where one argument is not above another. */
 export function inOrder(low: Expression, high: Expression): Condition {
   if (typeof low.literal !== 'number' || typeof high.literal !== 'number') return `${low.text}<=${high.text}`;
   if (low.literal <= high.literal) return null;
-  throw new NoEquivalent('an argument is out of range');
+  throw new NoEquivalent(reasons.outOfRange);
 }
 
 /** A number that may be left out, also by an empty cell, for 0: its value, null where it is known to be 0, and the conditions on it. */
@@ -81,7 +83,7 @@ export function byWord<T extends string>(argument: Expression, words: readonly T
   const { text, literal } = argument;
   if (literal !== undefined) {
     const word = words.find((one) => typeof literal === 'string' && one === literal.trim().toLowerCase());
-    if (word === undefined) throw new NoEquivalent('an argument is a word that is not known');
+    if (word === undefined) throw new NoEquivalent(reasons.unknownWord);
     return write(word);
   }
   const said = `LOWER(TRIM(${text}))`;

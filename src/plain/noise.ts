@@ -1,6 +1,7 @@
 // The row functions of the noise family as native formulas.
 
 import { type Equivalent, type Expression, NONE, NoEquivalent, WRONG, areNumbers, byWord, compares, optionalNumber, unlessBlank, where } from './native';
+import { reasons } from './sentences';
 
 export const JITTERSNR: Equivalent = {
   least: 2,
@@ -23,7 +24,7 @@ export const QUANTSNR: Equivalent = {
   rounds: false,
   write(bits, rate, bandwidth) {
     const ideal = `10*LOG10(1.5)+10*LOG10(4)*${bits.text}`;
-    return unlessBlank(bits, where([areNumbers(bits), compares(bits, '>=', 1)], `${ideal}${processingGain(rate, bandwidth)}`, WRONG));
+    return unlessBlank(bits, where([areNumbers(bits), compares(bits, '>=', 1), ...optionalNumber(rate).conditions], `${ideal}${processingGain(rate, bandwidth)}`, WRONG));
   },
 };
 
@@ -31,9 +32,9 @@ export const QUANTSNR: Equivalent = {
 function processingGain(rate: Expression, bandwidth: Expression): string {
   const kept = optionalNumber(bandwidth);
   if (kept.value === null) return '';
-  if (rate.text === '') throw new NoEquivalent('an argument is missing');
+  if (rate.text === '') throw new NoEquivalent(reasons.missing);
   const gain = where(
-    [...kept.conditions, areNumbers(rate), compares(rate, '>', 0), compares({ ...bandwidth, text: kept.value }, '>', 0), `${kept.value}<=${rate.text}/2`],
+    [...kept.conditions, areNumbers(rate), compares(rate, '>', 0), compares(bandwidth, '>', 0), `${kept.value}<=${rate.text}/2`],
     `10*LOG10(${rate.text}/(2*${kept.value}))`, WRONG);
   return typeof bandwidth.literal === 'number' ? `+${gain}` : `+IF(OR(${bandwidth.text}="",${bandwidth.text}=0),0,${gain})`;
 }

@@ -43,6 +43,8 @@ interface SourceRow {
 export class SheetPart {
   readonly #rows = new Map<number, Map<number, FileCell>>();
   readonly #changed = new Map<number, Set<number>>();
+  /** Changes outside of the cells. */
+  readonly #texts: Edit[] = [];
 
   private constructor(
     readonly name: string,
@@ -65,7 +67,7 @@ export class SheetPart {
   }
 
   get changed(): boolean {
-    return this.#changed.size > 0;
+    return this.#changed.size > 0 || this.#texts.length > 0;
   }
 
   /** Whether a formula spills now that did not in the file. */
@@ -135,13 +137,18 @@ export class SheetPart {
     this.#claim(row, column, cell.formula, true);
   }
 
+  /** Sets the text of an element outside of the cells that holds nothing else. */
+  setText(element: XmlElement, text: string): void {
+    this.#texts.push({ start: element.end, end: element.contentEnd, text: escapeText(text) });
+  }
+
   /** The sheet's XML with the changed cells; the rest of it as it was. */
   toXml(spillMark: string): string {
     const data = child(this.root, 'sheetData');
     if (!data) return this.xml;
     const prefix = prefixOf(this.xml, data);
     const write = (row: number, column: number) => this.#cellXml(row, column, prefix, spillMark);
-    const edits: Edit[] = [];
+    const edits: Edit[] = [...this.#texts];
     const newRows: { row: number; text: string }[] = [];
     const source = new Map(this.sourceRows.map((one) => [one.row, one]));
     for (const [row, columns] of [...this.#changed].sort(([a], [b]) => a - b)) {

@@ -6,6 +6,7 @@ import { type Book, openBook, sheetNamed } from './book';
 import { faults } from './faults';
 import { type SheetArea, referencedArea } from './formula-to-sheet';
 import { toFileFormula } from './formula-to-file';
+import { type FormulaSource, type Replacement, formulaSource, replaceFormulas } from './replace-formulas';
 import { type Calculator, type Recalculated, recalculate } from './recalculation';
 import type { SheetPart } from './sheet-part';
 
@@ -65,6 +66,16 @@ export class WorkbookFile implements Host {
     this.#written = [];
     for (const listener of this.#listeners) listener();
     return result;
+  }
+
+  /** All formulas of the file, and what they refer to. */
+  formulas(): Promise<FormulaSource> {
+    return formulaSource(this.book);
+  }
+
+  /** Puts others in place of formulas; the values that cells show stay, and nothing is computed. */
+  async replaceFormulas(replacement: Replacement): Promise<void> {
+    await replaceFormulas(this.book, replacement);
   }
 
   /** The file as it is now. */
