@@ -130,6 +130,7 @@ function rowsBelow(grid: Grid, header: number, one: number, other: number): { fi
     const cells = edges.map((column) => grid.at(row, column));
     if (cells.every((cell) => isText(cell) && columnOf(cell) !== null)) break;
     if (first === null && cells.some((cell) => isText(cell) && isUnit(cell))) continue;
+    if (!cells.every((cell) => typeof cell === 'number') && holdsLabel(grid, row)) break;
     if (cells.some((cell) => typeof cell === 'number')) {
       first ??= row;
       last = row;
@@ -138,6 +139,12 @@ function rowsBelow(grid: Grid, header: number, one: number, other: number): { fi
   }
   return first === null || last === null ? null : { first, last };
 }
+
+/** Whether a row is that of a rate or the like, below a plan. */
+const holdsLabel = (grid: Grid, row: number): boolean => range(grid.box.column, grid.box.columns).some((column) => {
+  const value = grid.at(row, column);
+  return isText(value) && cellOf(value)?.weak === false;
+});
 
 const ROLES = ['wanted', 'unwanted', 'ignore'];
 

@@ -51,6 +51,7 @@ const SHAPES: Shape[] = [
   ['a type that is no role',              [['Name', 'Low', 'High', 'Type'], ['FM', 1, 2, 'WFM'], ['AM', 3, 4, 'AM']], { name: 'A2:A3', low: 'B2:B3', high: 'C2:C3' }],
   ['results of an earlier insertion',     [['Folded low', 'Folded high', 'Name', 'Low', 'High'], ...withoutRole.map((row) => [1, 2, ...row])], { name: 'C2:C4', low: 'D2:D4', high: 'E2:E4' }],
   ['notes below the plan',                [['Name', 'Low', 'High'], ...withoutRole, [], [], [], ['Checked', 2026, 12]], { name: 'A2:A4', low: 'B2:B4', high: 'C2:C4' }],
+  ['a rate below the plan',                 [['Name', 'Low', 'High'], ...withoutRole, [], ['fs', 409.6]],              { name: 'A2:A4', low: 'B2:B4', high: 'C2:C4', rate: 'B6' }],
   ['a second table below',                [['Name', 'Low', 'High'], ...withoutRole, [], ['Name', 'Low', 'High'], ['LO', 1, 2]], { name: 'A2:A4', low: 'B2:B4', high: 'C2:C4' }],
   ['cells beside their labels',
     [['Sample rate', 409.6, 'MHz'], ['Guard', 0.02, 'MHz'], ['Clock tolerance', 20, 'ppm'], [], ['Name', 'Low', 'High'], ...withoutRole],
