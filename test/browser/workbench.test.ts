@@ -94,21 +94,23 @@ describe('the workbench', () => {
   it('opens with a plan that is computed, and a picture of it', async () => {
     const { name, workbook } = await saved();
     expect(name).toBe('Gannet Ness.xlsx');
-    const [plan, rates] = workbook.sheets as [Sheet, Sheet];
+    const [plan, choice, rates] = workbook.sheets as [Sheet, Sheet, Sheet];
     expect(foldedInSheet(plan)).toEqual(foldedByFunctions(plan));
     expect(valueAt(rates, 'A5')).toBe('Zone');
+    expect([valueAt(choice, 'A8'), valueAt(choice, 'F8'), valueAt(choice, 'L8')]).toEqual(['Distress beacons', 571.165756648467, 573.44]);
     expect(valueAt(rates, 'G6')).toBe(3.55);
     await expectText('#pane', '409.6');
     await page.screenshot({ path: outputFile('workbench-wide.png') });
   });
 
-  it('follows the rate cell: every FOLD column, the lists on the other sheet, and the picture', async () => {
+  it('follows the rate cell: every FOLD column, the lists on the other sheets, and the picture', async () => {
     await enter('B3', '575');
     await expectText('#pane', '575');
     const { workbook } = await saved();
-    const [plan, rates] = workbook.sheets as [Sheet, Sheet];
+    const [plan, choice, rates] = workbook.sheets as [Sheet, Sheet, Sheet];
     expect(valueAt(plan, 'B3')).toBe(575);
     expect(foldedInSheet(plan)).toEqual(foldedByFunctions(plan));
+    expect(valueAt(choice, 'B8')).toBe('clear');
     expect(valueAt(rates, 'G7')).toBe(575 - 3.55);
   });
 
