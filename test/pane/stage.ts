@@ -39,6 +39,7 @@ export async function stage(workbook: Workbook, make: MakeSection, between: (hos
   });
   document.body.append(section.place);
   await refresh();
+  await host.onRecalculated(() => void refresh());
   const { place } = section;
   const seen = (element: Element) => element.closest('[hidden]') === null;
   const named = <T extends HTMLElement>(tag: string, name: string): T => {
