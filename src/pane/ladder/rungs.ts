@@ -59,8 +59,8 @@ interface Density {
 
 /** From the roomiest on, as far as the rungs need to move together. */
 const DENSITIES: Density[] = [
-  { named: 5, numbered: 8, gap: 10, words: true },
-  { named: 2, numbered: 3, gap: 8, words: true },
+  { named: 8, numbered: 10, gap: 10, words: true },
+  { named: 3, numbered: 4, gap: 8, words: true },
   { named: 0, numbered: 1, gap: 6, words: false },
   { named: 0, numbered: 0, gap: 2, words: false },
 ];

@@ -27,7 +27,7 @@ export interface PlacedLabel {
 }
 
 /** Space between a bar and its label. */
-const BESIDE = 4;
+const BESIDE = 5;
 
 /**
  * Places bars between left and right, each in the lowest track where neither it nor its label touches another. A label stands

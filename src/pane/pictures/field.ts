@@ -12,7 +12,7 @@ export interface Field {
 
 /** @param take given what was typed, on Enter or when the field is left */
 export function field(document: Document, id: string, label: string, take: (typed: string) => void): Field {
-  const place = toDom(document, element('div', { class: 'field' },
+  const place = toDom(document, element('div', { class: 'number-field' },
     element('label', { for: id }, label),
     element('input', { id, type: 'text', inputmode: 'decimal', autocomplete: 'off', spellcheck: 'false', 'aria-describedby': `${id}-fault` }),
     element('p', { id: `${id}-fault`, class: 'fault', role: 'alert' }))) as HTMLElement;

@@ -53,15 +53,21 @@ export function stepped(rate: number, by: number, width: number, { step }: Grid)
 /** The nearest rate of the grid. */
 export const onGrid = (rate: number, { step }: Grid): number => (step === null ? rate : multiple(Math.max(1, Math.round(rate / step)), step));
 
-/** The most roomy of the usable ranges, those with most headroom first, each with the rate to choose in it. */
-export function roomiest(ranges: readonly PlanRange[], grid: Grid, most: number): { range: PlanRange; rate: number }[] {
-  const found: { range: PlanRange; rate: number }[] = [];
+/** A rate and how many ppm it may move either way within its usable range. */
+export interface Offer {
+  rate: number;
+  headroom: number;
+}
+
+/** Rates of the most roomy of the usable ranges, one of each, those with most headroom first. */
+export function roomiest(ranges: readonly PlanRange[], grid: Grid, most: number): Offer[] {
+  const found: Offer[] = [];
   for (const range of ranges.toSorted((a, b) => (b.headroom ?? Infinity) - (a.headroom ?? Infinity) || a.lowest - b.lowest)) {
     const rate = middleOf(range, grid);
-    if (rate !== null) found.push({ range, rate });
+    if (rate !== null) found.push({ rate, headroom: (Math.min(rate - range.lowest, (range.highest ?? Infinity) - rate) / rate) * 1e6 });
     if (found.length === most) break;
   }
-  return found;
+  return found.sort((a, b) => b.headroom - a.headroom || a.rate - b.rate);
 }
 
 function rangeNear(rate: number, ranges: readonly PlanRange[], reach: number): PlanRange | null {

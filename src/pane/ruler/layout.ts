@@ -102,7 +102,11 @@ export function rulerLayout(input: RulerInput, given: number): RulerLayout {
 
   add('heading', PAD, 16, 'start', sentences.heading, 13, width - 2 * PAD);
   const flag = (rate: number, words: string, flagY: number): Flag | null => {
-    if (!inside(rate)) return null;
+    if (!inside(rate)) {
+      const below = rate < window.from;
+      add('flag', below ? left : right, flagY, below ? 'start' : 'end', below ? sentences.outOfViewBelow(words) : sentences.outOfViewAbove(words), LABEL);
+      return null;
+    }
     const x = place(rate);
     const room = textWidth(words, LABEL);
     const toRight = x + 10 + room <= width - PAD;

@@ -1,6 +1,6 @@
 // The rate ruler on the page: its picture, the candidate that moves over it, and the rate cell it is written to.
 
-import { Fault, type ForbiddenRates, type PlanRange, forbiddenRates, planRates } from '../../engine';
+import { Fault, type ForbiddenRates } from '../../engine';
 import { attempts } from '../attempt';
 import { element } from '../element';
 import { type PlanFigures, figuresOf } from '../figures';
@@ -15,6 +15,7 @@ import type { Surroundings } from '../section';
 import { NAMES } from '../sentences';
 import { slot } from '../slot';
 import { nextMiddle, onGrid, rangeOf, rateAt, roomiest, stepped } from './candidate';
+import { type Findings, findingsIn, rangesBeyond } from './findings';
 import { candidateHandle } from './handle';
 import { type Lanes, forbidding, lanesOf } from './lanes';
 import { type RulerInput, type RulerLayout, rulerLayout } from './layout';
@@ -38,14 +39,6 @@ const OFFERED = 6;
 const IN = 0.6;
 /** Width of a picture that leaves the pane. */
 const TAKEN_OUT = 760;
-
-/** What the rules leave of the window, and why nothing where that is so. */
-interface Findings {
-  window: RateWindow;
-  ranges: PlanRange[];
-  found: ForbiddenRates | null;
-  problem: string | null;
-}
 
 /** @param stands told how the rate now stands, and null while that is being computed */
 export function rulerPanel(surroundings: Surroundings, stands: (rate: number, rules: RulesOf, standing: Standing | null) => void): RulerPanel {
@@ -80,7 +73,7 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
   const stage = box(document, { class: 'stage' });
   const handle = candidateHandle(document, {
     step: (by) => choose(stepped(candidate(), by, window().to - window().from, grid())),
-    range: (direction) => chooseNext(direction),
+    range: (direction) => void attempt(() => chooseNext(direction)),
     end: (direction) => choose(onGrid(direction < 0 ? window().from : window().to, grid())),
     zoom: (direction) => look(direction === 0 ? null : zoomedRates(window(), direction > 0 ? IN : 1 / IN, inWindow(candidate()))),
   });
@@ -115,7 +108,7 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
     group(document, sentences.rulerRules, fields.candidate.place, fields.step.place, fields.harmonics.place, fields.cores.place),
     stage, readout,
     group(document, sentences.candidate,
-      button(document, sentences.lowerUsable, () => chooseNext(-1)), button(document, sentences.higherUsable, () => chooseNext(1)), back, use, undo),
+      button(document, sentences.lowerUsable, () => void attempt(() => chooseNext(-1))), button(document, sentences.higherUsable, () => void attempt(() => chooseNext(1))), back, use, undo),
     standings.place, preview.place, offers.place, table.place, out.place,
   );
   use.classList.add('main');
@@ -130,10 +123,18 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
     draw();
   }
 
-  function chooseNext(direction: 1 | -1): void {
-    const rate = nextMiddle(candidate(), direction, ranges(), grid());
-    if (rate === null) tell(direction > 0 ? sentences.noneAbove : sentences.noneBelow, 'news');
-    else choose(rate);
+  /** What is in view first, then what lies beyond. */
+  async function chooseNext(direction: 1 | -1): Promise<void> {
+    const from = candidate();
+    const next = (some: Findings['ranges']) => nextMiddle(from, direction, some, grid());
+    try {
+      const rate = next(ranges()) ?? next(await rangesBeyond(rules!, window(), direction, (some) => next(some) !== null));
+      if (rate === null) tell(direction > 0 ? sentences.noneAbove : sentences.noneBelow, 'news');
+      else choose(rate);
+    } catch (fault) {
+      if (!(fault instanceof Fault)) throw fault;
+      tell(fault.message, 'fault');
+    }
   }
 
   function look(at: RateWindow | null): void {
@@ -338,7 +339,7 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
         ? element('p', { class: 'problem' }, none)
         : element('div', { class: 'offers-list', role: 'group', 'aria-label': step === null ? sentences.roomiest : sentences.roomiestStep(step) },
           element('p', {}, step === null ? sentences.roomiest : sentences.roomiestStep(step)),
-          ...some.map(({ rate, range }) => element('button', { type: 'button', 'data-rate': rate, 'data-keep': `rate ${rate}` }, sentences.choose(exactFigure(rate), ppmText(range.headroom ?? 0))))),
+          ...some.map(({ rate, headroom }) => element('button', { type: 'button', 'data-rate': rate, 'data-keep': `rate ${rate}` }, sentences.choose(exactFigure(rate), ppmText(headroom))))),
     ]);
   }
 
@@ -390,21 +391,4 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
       for (const work of [findings, nowStanding, thenStanding]) work.stop();
     },
   };
-}
-
-/** The engine's answers within a window; where it has none, its sentence. */
-function findingsIn({ plan, ppm }: RulesOf, window: RateWindow): Findings {
-  const nothing: Findings = { window, ranges: [], found: null, problem: null };
-  const attemptTo = <T>(work: () => T): T | string => {
-    try {
-      return work();
-    } catch (fault) {
-      if (!(fault instanceof Fault)) throw fault;
-      return fault.message;
-    }
-  };
-  const found = attemptTo(() => forbiddenRates(plan, window.from, window.to, ppm));
-  if (typeof found === 'string') return { ...nothing, problem: found };
-  const ranges = attemptTo(() => planRates(plan, window.from, window.to, ppm));
-  return typeof ranges === 'string' ? { ...nothing, found, problem: ranges } : { window, ranges, found, problem: null };
 }

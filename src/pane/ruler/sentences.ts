@@ -11,6 +11,8 @@ export const sentences = {
   usable: 'usable',
   now: (rate: string) => `now ${rate}`,
   candidate: (rate: string) => `candidate ${rate}`,
+  outOfViewBelow: (flag: string) => `◂ ${flag}`,
+  outOfViewAbove: (flag: string) => `${flag} ▸`,
   title: (from: string, to: string) => `Rate ruler from ${from} to ${to}`,
   description: (ranges: string, rate: string) => `${ranges} The rate is now ${rate}. Each lane below shows the rates that one kind of rule, or one rule, forbids.`,
   rangeCount: (count: number) => (count === 0 ? 'No rate in view is usable.' : count === 1 ? 'One range of rates in view is usable.' : `${count} ranges of rates in view are usable.`),

@@ -88,6 +88,7 @@ describe('steps of the candidate', () => {
   });
 
   it('the roomiest come first', () => {
-    expect(roomiest([range(90, 91), range(100, 108), range(110, 114)], free, 2).map(({ rate }) => rate)).toEqual([104, 112]);
+    const offers = roomiest([range(90, 91), range(100, 108), range(110, 114)], free, 2);
+    expect(offers.map(({ rate, headroom }) => [rate, Math.floor(headroom)])).toEqual([[104, 38461], [112, 17857]]); // 4/104 and 2/112
   });
 });
