@@ -238,7 +238,7 @@ export const columnsSection: MakeSection = (surroundings) => {
 
   function choice(type: 'checkbox' | 'radio', name: string, text: string, hint: string) {
     const made = toDom(document, element('label', { class: 'choice' },
-      element('input', { type, ...(name && { name }) }), element('span', { class: 'text' }, text), ...(hint ? [element('span', { class: 'hint' }, hint)] : []))) as HTMLElement;
+      element('input', { type, ...(name && { name }) }), element('span', {}, element('span', { class: 'text' }, text), ...(hint ? [' ', element('span', { class: 'hint' }, hint)] : [])))) as HTMLElement;
     return { place: made, input: made.querySelector('input')!, text: made.querySelector<HTMLElement>('.text')! };
   }
 

@@ -4,10 +4,13 @@ import { type Tree, element } from '../element';
 import type { PlanFigures } from '../figures';
 import { exactFigure } from '../number-text';
 import { decimalsOf, marginDecimalsOf } from './number-format';
-import { type ResultKey, RESULTS } from './results';
+import { type ResultKey, RESULTS, RESULT_KEYS } from './results';
 import { sentences } from './sentences';
 
 const ROWS = 5;
+
+/** Columns that hold numbers. */
+const FIGURES: ReadonlySet<string> = new Set(RESULT_KEYS.filter((key) => key !== 'inverted' && key !== 'check').map((key) => sentences.titles[key]));
 
 export function previewTable(figures: PlanFigures, results: ResultKey[]): Tree {
   const { plan, rows } = figures;
@@ -19,13 +22,13 @@ export function previewTable(figures: PlanFigures, results: ResultKey[]): Tree {
     return places === null ? exactFigure(value) : value.toFixed(places);
   };
   const titles = results.map((key) => sentences.titles[key]);
-  return element('table', { role: 'table', class: 'preview' },
+  return element('div', { class: 'scroll', role: 'region', 'aria-label': sentences.preview, tabindex: 0 }, element('table', { class: 'preview' },
     element('caption', {}, sentences.previewCaption(Math.min(ROWS, rows.length), rows.length)),
-    element('thead', { role: 'rowgroup' }, element('tr', { role: 'row' },
-      ...[sentences.nameColumn, ...titles].map((title) => element('th', { role: 'columnheader', scope: 'col' }, title)))),
-    element('tbody', { role: 'rowgroup' }, ...rows.slice(0, ROWS).map(({ row, band, problem }) => element('tr', { role: 'row', 'data-row': row.index },
-      element('th', { role: 'rowheader', scope: 'row' }, element('bdi', {}, row.name)),
+    element('thead', {}, element('tr', {},
+      ...[sentences.nameColumn, ...titles].map((title) => element('th', { scope: 'col', class: FIGURES.has(title) ? 'figure' : undefined }, title)))),
+    element('tbody', {}, ...rows.slice(0, ROWS).map(({ row, band, problem }) => element('tr', { 'data-row': row.index },
+      element('th', { scope: 'row', title: row.name }, element('bdi', {}, row.name)),
       ...(band === null
-        ? [element('td', { role: 'cell', colspan: results.length }, problem ?? '')]
-        : results.map((key, i) => element('td', { role: 'cell', class: RESULTS[key].kind === 'word' ? undefined : 'figure', 'data-column': titles[i] }, text(key, RESULTS[key].value(band, plan.rate!)))))))));
+        ? [element('td', { colspan: results.length, class: 'problem' }, problem ?? '')]
+        : results.map((key) => element('td', { class: FIGURES.has(sentences.titles[key]) ? 'figure' : undefined }, text(key, RESULTS[key].value(band, plan.rate!))))))))));
 }

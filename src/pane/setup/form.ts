@@ -33,7 +33,7 @@ export function planForm(document: Document, actions: FormActions): Form {
     return made;
   };
   const choices = group(sentences.edges, edgeChoices.map(({ choice }) => choice));
-  choices.classList.add('choices');
+  choices.classList.add('choices', 'beside');
   const place = document.createElement('div');
   const of = (keys: readonly NameKey[]) => fields.filter(({ key }) => keys.includes(key)).map(({ place: own }) => own);
   place.append(choices, group(sentences.columns, of(COLUMN_KEYS)), group(sentences.cells, of(CELL_KEYS)));
