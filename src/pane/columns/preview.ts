@@ -22,7 +22,7 @@ export function previewTable(figures: PlanFigures, results: ResultKey[]): Tree {
     return places === null ? exactFigure(value) : value.toFixed(places);
   };
   const titles = results.map((key) => sentences.titles[key]);
-  return element('div', { class: 'scroll', role: 'region', 'aria-label': sentences.preview, tabindex: 0 }, element('table', { class: 'preview' },
+  return element('div', { class: 'scroll', role: 'region', 'aria-label': sentences.preview, tabindex: 0 }, element('table', { class: 'first-rows' },
     element('caption', {}, sentences.previewCaption(Math.min(ROWS, rows.length), rows.length)),
     element('thead', {}, element('tr', {},
       ...[sentences.nameColumn, ...titles].map((title) => element('th', { scope: 'col', class: FIGURES.has(title) ? 'figure' : undefined }, title)))),

@@ -31,7 +31,7 @@ const column = (rows: unknown[][]) => rows.map(([cell]) => cell);
 describe('the section Columns', () => {
   it('shows the first rows before anything is inserted, by the engine', async () => {
     const { place } = await start(edgesPlan());
-    const rows = [...place.querySelectorAll('.preview tbody tr')].map((row) => [...row.querySelectorAll('th, td')].map((cell) => cell.textContent));
+    const rows = [...place.querySelectorAll('.first-rows tbody tr')].map((row) => [...row.querySelectorAll('th, td')].map((cell) => cell.textContent));
     const [low, high] = [[118, 161.9625, 122], [137, 162.0375, 124]];
     expect(rows.map((row) => Number(row[1]))).toEqual(column(call('LOW', low, high, 245.76)));
     expect(rows.map((row) => Number(row[2]))).toEqual(column(call('HIGH', low, high, 245.76)));
