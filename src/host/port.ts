@@ -99,6 +99,8 @@ export interface LiveHost extends Host {
 
   /** The formulas in the cells of a reference, or null as in `read`. */
   formulas(reference: string): Promise<FormulaBlock | null>;
+  /** The blocks that formulas of a sheet fill beyond their own cells, each as its address: `D3:D9`. */
+  spills(sheet: string): Promise<string[]>;
   /** The block of filled cells around a reference, as far as the first blank row and column on every side; null where those cells are blank. */
   surroundings(reference: string): Promise<Block | null>;
   /** The sheets in the order of their tabs, each with the part that holds anything; its address is '' where it is blank. */

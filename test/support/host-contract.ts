@@ -155,6 +155,13 @@ export function testLiveHost(name: string, open: (workbook: Workbook) => Promise
       expect(await host.formulas('Fold_Nothing')).toBeNull();
     });
 
+    it('tells the blocks that formulas fill', async () => {
+      const { host } = await start();
+      expect(await host.spills('Plan')).toEqual(['D3:D4']);
+      expect(await host.spills("Clock's tree")).toEqual([]);
+      expect(await host.spills('Missing')).toEqual([]);
+    });
+
     it.each([
       ['inside a block',        'Plan!A4',    'A3:B5'],
       ['on its edge',           'Plan!B3',    'A3:B5'],

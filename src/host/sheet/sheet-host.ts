@@ -16,7 +16,7 @@ import { type Found, OpenWorkbook } from './open-workbook';
 import { Recalculation } from './recalculation';
 import { cannotAddPicture, faults } from './sheet-faults';
 import type { Listener } from './univer-functions';
-import { fromWorkbook, toWorkbookData } from './workbook-data';
+import { fromWorkbook, spills, toWorkbookData } from './workbook-data';
 
 export class SheetHost implements LiveHost {
   readonly cannot = { addPicture: cannotAddPicture };
@@ -40,6 +40,11 @@ export class SheetHost implements LiveHost {
   async formulas(reference: string): Promise<FormulaBlock | null> {
     const found = this.open.find(reference);
     return found && { ...placeOf(found), formulas: this.open.formulasOf(found) };
+  }
+
+  async spills(sheet: string): Promise<string[]> {
+    const found = this.open.sheetNamed(sheet);
+    return found ? spills(found, this.get(FormulaDataModel)).map(formatRange) : [];
   }
 
   async surroundings(reference: string): Promise<Block | null> {
