@@ -17,7 +17,7 @@ const MAY_IMPORT: Record<string, readonly string[]> = {
   'host/file': ['host/port', 'formula'],
   formula: [],
   plain: ['host/port', 'formula'],
-  pane: ['engine', 'host/port'],
+  pane: ['engine', 'host/port', 'plain'],
   help: [],
   workbench: [],
   demo: ['host/port'],

@@ -4,6 +4,7 @@ import './pane.css';
 import { HostFault, type LiveHost, type Place } from '../host/port';
 import { parseAddress } from './address';
 import { columnsSection } from './columns';
+import { handOverSection } from './handover';
 import { element, toDom } from './element';
 import { type PlanFigures, figuresOf } from './figures';
 import { headlineSection, noticeList } from './page';
@@ -17,7 +18,7 @@ import { tabs } from './tabs';
 import { headline } from './words';
 
 /** In the order of the job. */
-const SECTIONS: MakeSection[] = [planSection, columnsSection, picturesSection];
+const SECTIONS: MakeSection[] = [planSection, columnsSection, picturesSection, handOverSection];
 const PLAN = SECTIONS.indexOf(planSection);
 const PICTURES = SECTIONS.indexOf(picturesSection);
 

@@ -17,6 +17,8 @@ export interface PlainSource {
   /** Formulas elsewhere: in rules of conditional formats, in columns of tables. */
   others: readonly { sheet: string; where: string; text: string }[];
   sheets: readonly string[];
+  /** Names that stay and call functions of ours: formulas that use them become values. */
+  lost?: readonly string[];
   /** The cells that a reference means in a formula at a place, null where it means something else. */
   areaOf(reference: string, at: { sheet: string; row: number; column: number }): SheetArea | null;
 }
@@ -81,6 +83,7 @@ class Copier {
   readonly #spills = new Map<string, { area: Area; dissolved: boolean }>();
 
   constructor(private readonly source: PlainSource) {
+    for (const name of source.lost ?? []) this.#lost.add(name.toLowerCase());
     this.#counts = source.sheets.map((sheet) => ({ sheet, formulas: 0, values: 0 }));
     for (const { sheet, area, text } of source.formulas) this.#spills.set(place(sheet, area.top, area.left), { area, dissolved: callsOurs(text) });
   }

@@ -1,0 +1,162 @@
+// The section Hand over: a plain copy for colleagues without the add-in, and FOLD cells that show an error.
+
+import { HostFault, type Workbook } from '../../host/port';
+import { referenceTo } from '../address';
+import { attempts } from '../attempt';
+import { type Tree, element, toDom } from '../element';
+import { noticeList } from '../page';
+import type { MakeSection } from '../section';
+import { slot } from '../slot';
+import { contentsOf } from './contents';
+import { plainSheet, sheetsWithFormulas } from './plain-sheet';
+import { sentences } from './sentences';
+import { type Trouble, isUnknown, troublesIn } from './troubles';
+
+/** How many cells in error are told one by one. */
+const TOLD = 20;
+
+/** Thrown into the work on a copy to end it. */
+class Cancelled extends Error {}
+
+export const handOverSection: MakeSection = (surroundings) => {
+  const { document, host, tell, refresh, version } = surroundings;
+  const attempt = attempts(surroundings);
+
+  let contents: Workbook | null = null;
+  let undo: (() => Promise<void>) | null = null;
+  let cancelled = false;
+
+  // The page
+
+  const place = document.createElement('div');
+  place.className = 'hand-over';
+  const none = slot(document, 'none');
+  const select = toDom(document, element('select', { id: 'foldplan-copied-sheet' })) as HTMLSelectElement;
+  const field = toDom(document, element('div', { class: 'field' }, element('label', { for: 'foldplan-copied-sheet' }, sentences.chosen))) as HTMLElement;
+  field.append(select);
+  const making = button('main', sentences.make, () => attempt(make));
+  const cancelling = button('', sentences.cancel, () => {
+    cancelled = true;
+  });
+  const undoing = button('', sentences.undo, () => attempt(takeBack));
+  const buttons = toDom(document, element('div', { class: 'buttons' })) as HTMLElement;
+  buttons.append(making, cancelling, undoing);
+  const progress = slot(document, 'progress', { role: 'status' });
+  const troubles = slot(document, 'troubles');
+  const reentering = button('', '', () => attempt(reenter));
+  place.append(
+    toDom(document, element('h3', {}, sentences.plain)), toDom(document, element('p', { class: 'hint' }, sentences.about)),
+    none.place, field, buttons, progress.place,
+    toDom(document, element('h3', {}, sentences.troubles)), troubles.place, reentering,
+  );
+  cancelling.hidden = true;
+  draw();
+
+  function button(className: string, text: string, work: () => unknown): HTMLButtonElement {
+    const made = toDom(document, element('button', { type: 'button', class: className }, text)) as HTMLButtonElement;
+    made.addEventListener('click', work);
+    return made;
+  }
+
+  function draw(): void {
+    const sheets = contents ? sheetsWithFormulas(contents) : [];
+    none.show(contents && sheets.length === 0 ? [element('p', {}, sentences.none)] : []);
+    field.hidden = making.hidden = sheets.length === 0;
+    undoing.hidden = undo === null;
+    const chosen = select.value;
+    select.replaceChildren(...sheets.map(({ sheet, count }) => toDom(document, element('option', { value: sheet }, sentences.sheet(sheet, count)))));
+    select.value = sheets.some(({ sheet }) => sheet === chosen) ? chosen : sheets[0]?.sheet ?? '';
+    const found = contents ? troublesIn(contents) : [];
+    const unknown = found.filter(isUnknown).length;
+    troubles.show(contents ? troubleList(found) : []);
+    reentering.hidden = unknown === 0;
+    reentering.textContent = sentences.reenter(unknown);
+  }
+
+  async function look(): Promise<void> {
+    contents = await contentsOf(host);
+    draw();
+  }
+
+  // Changes of the workbook
+
+  async function make(): Promise<void> {
+    const sheet = select.value;
+    cancelled = false;
+    making.hidden = true;
+    cancelling.hidden = false;
+    cancelling.focus();
+    try {
+      await look();
+      making.hidden = true;
+      if (!contents!.sheets.some(({ name }) => name === sheet)) return tell(sentences.gone(sheet), 'fault');
+      const copied = await plainSheet(contents!, sheet, { version, date: new Date().toISOString().slice(0, 10) }, async (done, total) => {
+        progress.show([element('p', {}, sentences.progress(done, total))]);
+        await new Promise((resume) => setTimeout(resume)); // lets a click through
+        if (cancelled) throw new Cancelled();
+      });
+      undo = await host.change(copied.change);
+      await host.select(referenceTo(copied.copy, 'A1'));
+      tell(sentences.made(copied.copy, copied.list, copied.formulas, copied.values), 'news');
+    } catch (fault) {
+      if (!(fault instanceof Cancelled)) throw fault;
+      tell(sentences.cancelled, 'news');
+    } finally {
+      progress.show([]);
+      cancelling.hidden = true;
+      await look();
+      (undo ? undoing : making).focus();
+    }
+  }
+
+  async function takeBack(): Promise<void> {
+    const back = undo;
+    undo = null; // once only, whatever becomes of it
+    await back?.();
+    await look();
+    making.focus();
+    tell(sentences.undone, 'news');
+  }
+
+  async function reenter(): Promise<void> {
+    await look();
+    const unknown = troublesIn(contents!).filter(isUnknown);
+    await host.change({ cells: unknown.map(({ sheet, address, formula }) => ({ reference: referenceTo(sheet, address), cells: [[{ formula }]] })) });
+    await refresh();
+    await look();
+    const left = troublesIn(contents!).filter(isUnknown);
+    if (left.length > 0) tell(sentences.stillUnknown(placeOf(left[0]!)), 'fault');
+    else tell(sentences.reentered(unknown.length), 'news');
+  }
+
+  return {
+    title: sentences.title,
+    place,
+    show() {
+      look().catch((fault: unknown) => {
+        if (!(fault instanceof HostFault)) throw fault;
+        tell(fault.message, 'fault');
+      });
+    },
+    close() {
+      cancelled = true;
+    },
+  };
+};
+
+function troubleList(troubles: Trouble[]): Tree[] {
+  if (troubles.length === 0) return [element('p', {}, sentences.noTroubles)];
+  const unknown = troubles.filter(isUnknown);
+  const others = troubles.filter((one) => !isUnknown(one));
+  return [noticeList([
+    ...(unknown.length > 0 ? [unknownSentence(unknown)] : []),
+    ...others.slice(0, TOLD).map((one) => sentences.trouble(placeOf(one), one.code, one.message)),
+    ...(others.length > TOLD ? [sentences.andMore(others.length - TOLD)] : []),
+  ])];
+}
+
+/** For the list, and for the banner above all sections. */
+export const unknownSentence = (unknown: Trouble[]): string =>
+  sentences.unknown(unknown.length, unknown.length === 1 ? placeOf(unknown[0]!) : `${placeOf(unknown[0]!)} to ${placeOf(unknown.at(-1)!)}`);
+
+const placeOf = ({ sheet, address }: Trouble): string => referenceTo(sheet, address);
