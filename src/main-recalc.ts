@@ -2,15 +2,13 @@
 
 import { randomBytes } from 'node:crypto';
 import { rmSync } from 'node:fs';
-import { open, readFile, realpath, rename, rm, stat } from 'node:fs/promises';
+import { access, constants, open, readFile, realpath, rename, rm, stat } from 'node:fs/promises';
 import path from 'node:path';
 import { setImmediate } from 'node:timers/promises';
 import { parseArgs } from 'node:util';
 import { type Calculator, type Recalculated, WorkbookFile } from './host/file';
 import { type CellInput, HostFault } from './host/port';
-import { calculate } from './host/sheet/calculate';
 import { type WorksheetFunctions, loadFunctions } from './host/sheet/functions-runtime';
-import { unknownParts } from './host/sheet/known-functions';
 import { type PlainCopy, plainCopy } from './plain';
 
 const HELP = `Recalculates the FOLD formulas of a workbook, and the other formulas that depend on them.
@@ -58,22 +56,26 @@ async function run(args: string[]): Promise<number> {
 
 async function recalculate({ input, output, settings, plain }: Job): Promise<number> {
   if (plain && await isSameFile(input, output)) throw new Refusal('A plain copy is another file than the workbook: give --out another name.');
-  const functions = await builtFunctions();
   const progress = new Progress();
-  const calculator: Calculator = {
-    calculate: (workbook) => calculate(workbook, functions, (done, total) => progress.tell(`Computed ${done} of ${total} formulas`)),
-    unknownParts,
-  };
   const bytes = await refusing(input, () => readFile(input));
+  await refusing(output, () => checkPlace(output));
   const file = await refusing(input, () => WorkbookFile.open(bytes));
   for (const { reference, value } of settings) await set(file, reference, value);
-  const result = await file.recalculate(calculator);
+  const result = await file.recalculate(await calculatorWith(progress));
   const copy = plain ? await makePlain(file, progress) : null;
   progress.end();
   await refusing(output, async () => replaceFile(output, await file.save()));
   const code = report(result);
   if (copy) reportPlain(copy);
   return code;
+}
+
+/** The sheet that computes is large: it is loaded when it is known to be needed. */
+async function calculatorWith(progress: Progress): Promise<Calculator> {
+  const functions = await builtFunctions();
+  const { calculate } = await import(/* webpackMode: "eager" */ './host/sheet/calculate');
+  const { unknownParts } = await import(/* webpackMode: "eager" */ './host/sheet/known-functions');
+  return { calculate: (workbook) => calculate(workbook, functions, (done, total) => progress.tell(`Computed ${done} of ${total} formulas`)), unknownParts };
 }
 
 async function makePlain(file: WorkbookFile, progress: Progress): Promise<PlainCopy> {
@@ -123,7 +125,7 @@ function readArguments(args: string[]): Job | 'help' {
   if (values.out.length > 1) throw new Refusal('Name one file with --out.');
   const [input, output] = [resolve(positionals[0]!), resolve(values.out[0]!)];
   const kind = (file: string) => /\.xl(s|sx|sm|tx|tm|sb)$/i.exec(file)?.[0].toLowerCase();
-  if (kind(input) && kind(output) && kind(input) !== kind(output)) {
+  if (kind(input) && kind(input) !== kind(output)) {
     throw new Refusal(`The result is a file of the same kind as the workbook: give it a name that ends with ${kind(input)}.`);
   }
   return { input, output, settings: (values.set ?? []).map(readSetting), plain: values.plain ?? false };
@@ -174,11 +176,17 @@ async function isSameFile(one: string, other: string): Promise<boolean> {
 /** A file that is not yet whole. */
 let unfinished: string | null = null;
 
+/** Tells before the work that its result can't be put there. */
+async function checkPlace(file: string): Promise<void> {
+  const target = await realpath(file).catch(() => file);
+  if ((await stat(target).catch(() => null))?.isDirectory()) throw Object.assign(new Error(), { code: 'EISDIR' });
+  await access(`${path.dirname(target)}/.`, constants.W_OK); // with the dot, a file is no folder
+}
+
 /** The file is replaced as a whole or not at all. */
 async function replaceFile(file: string, bytes: Uint8Array): Promise<void> {
   const target = await realpath(file).catch(() => file);
   const before = await stat(target).catch(() => null);
-  if (before?.isDirectory()) throw Object.assign(new Error(), { code: 'EISDIR' });
   const beside = path.join(path.dirname(target), `.${path.basename(target)}.${randomBytes(6).toString('hex')}`);
   unfinished = beside;
   try {

@@ -19,6 +19,9 @@ const demo = demoFor(new URLSearchParams(location.search).get('demo'));
 /** Put in by the build. */
 declare const FOLDPLAN_VERSION: string;
 
+/** Takes the pane away that is there. */
+let closePane = () => {};
+
 /** The file that the sheet shows. */
 const current = { name: demo.name, unsaved: false };
 
@@ -47,7 +50,17 @@ async function start(): Promise<void> {
     page.complain(sentences.cannotStart);
     return;
   }
-  mountPane(host, page.pane, FOLDPLAN_VERSION).catch(() => page.complain(sentences.noPictures));
+  await showPane(page, host);
+}
+
+/** Another workbook is another pane: nothing of what was begun in the old one goes on in the new one. */
+async function showPane(page: Page, host: SheetHost): Promise<void> {
+  closePane();
+  try {
+    closePane = await mountPane(host, page.pane, FOLDPLAN_VERSION);
+  } catch {
+    page.complain(sentences.noPane);
+  }
 }
 
 /** The contract of every host, loaded as a page loads it. */
@@ -77,6 +90,7 @@ async function open(page: Page, host: SheetHost, file: File): Promise<void> {
     const { workbook, notKept } = await readWorkbook(new Uint8Array(await file.arrayBuffer()));
     await host.load(workbook, (done, total) => page.tell(sentences.computing(file.name, done, total)));
     nameCurrent(page, file.name, false);
+    await showPane(page, host);
     page.tell(whatWasOpened(file.name, workbook, notKept));
   } catch (error) {
     page.complain(error instanceof HostFault ? `${file.name}: ${error.message}` : sentences.cannotOpen(file.name));

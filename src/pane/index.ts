@@ -59,8 +59,8 @@ export async function mountPane(host: LiveHost, root: HTMLElement, version: stri
       notices.show(noticesOf(shown));
       glance.show(shown.bands.length > 0 ? [headlineSection(headline(shown))] : []);
     }
-    if (frame.current() < 0) frame.choose(plan.missing.length > 0 ? PLAN : PICTURES);
-    else showSection();
+    if (frame.current() >= 0) showSection();
+    else frame.choose(plan.missing.length > 0 ? PLAN : PICTURES);
   }
 
   // Reads may overtake one another: what was asked later is newer.
@@ -102,18 +102,25 @@ export async function mountPane(host: LiveHost, root: HTMLElement, version: stri
     showFaults();
   }
 
-  let waiting: ReturnType<typeof setTimeout> | undefined;
-  const follow = () => {
-    waiting ??= setTimeout(() => {
-      waiting = undefined;
-      void refresh();
-    }, BURST);
-  };
-
-  const stops: (() => Promise<void>)[] = [];
-  for (const listen of [host.onRecalculated, host.onEdited, host.onSelected]) {
+  async function followSelection(): Promise<void> {
     try {
-      stops.push(await listen.call(host, follow));
+      const selection = await host.selection();
+      if (shown === null) return;
+      selected = selectedRow(shown.plan, selection);
+      showSection();
+    } catch (fault) {
+      if (!(fault instanceof HostFault)) throw fault;
+      unread = sentences.lastPicture(fault.message);
+      showFaults();
+    }
+  }
+
+  const readAgain = inBursts(refresh);
+  const selectAgain = inBursts(followSelection);
+  const stops: (() => Promise<void>)[] = [];
+  for (const listen of [() => host.onRecalculated(readAgain.ask), () => host.onEdited(readAgain.ask), () => host.onSelected(selectAgain.ask)]) {
+    try {
+      stops.push(await listen());
     } catch (fault) {
       if (!(fault instanceof HostFault)) throw fault;
       const sentence = sentences.followsNot(fault.message);
@@ -124,11 +131,26 @@ export async function mountPane(host: LiveHost, root: HTMLElement, version: stri
 
   return () => {
     answered = Infinity;
-    clearTimeout(waiting);
+    readAgain.stop();
+    selectAgain.stop();
     for (const stop of stops) void stop();
     for (const section of sections) section.close();
     root.replaceChildren();
     root.classList.remove('foldplan');
+  };
+}
+
+/** Work that is done once for many requests that come close together. */
+function inBursts(work: () => Promise<void>): { ask(): void; stop(): void } {
+  let waiting: ReturnType<typeof setTimeout> | undefined;
+  return {
+    ask() {
+      waiting ??= setTimeout(() => {
+        waiting = undefined;
+        void work();
+      }, BURST);
+    },
+    stop: () => clearTimeout(waiting),
   };
 }
 

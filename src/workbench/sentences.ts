@@ -14,7 +14,7 @@ export const sentences = {
   cannotSave: (file: string) => `${file} could not be saved.`,
   mayDiscard: (file: string, next: string) => `${file} has changes that are not saved. Open ${next} all the same?`,
   cannotStart: 'The workbench could not start: a file of the site is missing or out of date.',
-  noPictures: 'The pictures beside the sheet could not be drawn.',
+  noPane: 'The pane beside the sheet could not be shown.',
   cell: (address: string, value: string | number | boolean | null) => `${address} ${value === null || value === '' ? 'blank' : String(value)}`,
   cellError: (address: string, code: string, sentence: string | undefined) => `${address} ${code} ${sentence ?? MEANINGS[code] ?? ''}`.trim(),
 };

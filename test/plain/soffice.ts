@@ -15,12 +15,17 @@ const SETTINGS = `<?xml version="1.0" encoding="UTF-8"?>
 <item oor:path="/org.openoffice.Office.Calc/Formula/Load"><prop oor:name="OOXMLRecalcMode" oor:op="fuse"><value>0</value></prop></item>
 </oor:items>`;
 
-/** The workbooks as it saves them, by their names. */
-export function recomputed(workbooks: Record<string, Uint8Array>): Record<string, Uint8Array> {
+/** The workbooks as it saves them, by their names, with all formulas computed anew. */
+export const recomputed = (workbooks: Record<string, Uint8Array>): Record<string, Uint8Array> => savedElsewhere(workbooks, SETTINGS);
+
+/** The workbooks as it saves them, by their names, with the values that it found in them. */
+export const reopened = (workbooks: Record<string, Uint8Array>): Record<string, Uint8Array> => savedElsewhere(workbooks);
+
+function savedElsewhere(workbooks: Record<string, Uint8Array>, settings?: string): Record<string, Uint8Array> {
   const folder = mkdtempSync(path.join(tmpdir(), 'foldplan-'));
   try {
     mkdirSync(path.join(folder, 'profile/user'), { recursive: true });
-    writeFileSync(path.join(folder, 'profile/user/registrymodifications.xcu'), SETTINGS);
+    if (settings !== undefined) writeFileSync(path.join(folder, 'profile/user/registrymodifications.xcu'), settings);
     const names = Object.keys(workbooks);
     for (const name of names) writeFileSync(path.join(folder, `${name}.xlsx`), workbooks[name]!);
     execFileSync('soffice', [

@@ -131,7 +131,7 @@ export const columnsSection: MakeSection = (surroundings) => {
     evading.textContent = sentences.nextFree(columnLetters(freeColumn()));
     inserting.textContent = sentences.insert(count);
     undoing.hidden = done === null;
-    preview.show(count > 0 ? [element('h3', {}, sentences.preview), previewTable(figures!, asked.results), formulaList(asked)] : []);
+    preview.show(count > 0 ? [element('h2', {}, sentences.preview), previewTable(figures!, asked.results), formulaList(asked)] : []);
   }
 
   function formulaList(asked: Wanted): Tree {
@@ -193,6 +193,7 @@ export const columnsSection: MakeSection = (surroundings) => {
     }
     done = { undo: await host.change(change), sheet, box, title: titleIn(change) };
     chosen = '';
+    draw(); // the way back is there, whatever comes next
     await refresh();
     await look();
     tell(sentences.inserted(asked.results.length, addressOf(box)), 'news');

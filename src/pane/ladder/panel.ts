@@ -118,8 +118,8 @@ function fractionAt({ frame }: LadderLayout, x: number): number {
 }
 
 function roleChoice(document: Document, take: (role: LadderView['role']) => void): HTMLElement {
-  const place = toDom(document, element('label', { class: 'view-choice' }, sentences.role,
-    element('select', {}, ...Object.entries(sentences.roles).map(([role, words]) => element('option', { value: role }, words))))) as HTMLElement;
+  const place = toDom(document, element('div', { class: 'view-choice' }, element('label', { for: 'ladder-role' }, sentences.role),
+    element('select', { id: 'ladder-role' }, ...Object.entries(sentences.roles).map(([role, words]) => element('option', { value: role }, words))))) as HTMLElement;
   const select = place.querySelector('select')!;
   select.addEventListener('change', () => take(select.value as LadderView['role']));
   return place;

@@ -36,6 +36,7 @@ export const sentences = {
   step: 'Step',
   harmonics: 'Harmonics up to',
   cores: 'Cores',
+  choosing: 'Choose a rate',
   lowerUsable: 'Next usable below',
   higherUsable: 'Next usable above',
   candidateSlider: 'Candidate rate',
@@ -59,7 +60,6 @@ export const sentences = {
   // Input
 
   rateNeeded: (what: string, got: string) => `${what} must be a number above 0; got ${got}.`,
-  fromBelowTo: (from: string, to: string) => `From must be below To; got ${from} and ${to}.`,
   stepNeeded: (got: string) => `Step must be a number above 0, or blank for any rate; got ${got}.`,
   countNeeded: (what: string, most: number, got: string) => `${what} must be a whole number from 1 to ${most}; got ${got}.`,
   quoted: (text: string) => (text === '' ? 'nothing' : `"${text}"`),

@@ -77,7 +77,7 @@ const LABEL = 11;
 const SMALL = 10;
 const SWATCH = 18;
 /** From this width on, labels stand beside their lanes, else above them. */
-const BESIDE_FROM = 520;
+const BESIDE_FROM = 440;
 const NARROWEST_MARK = 1.5;
 /** Marks nearer than this are drawn as one. */
 const JOINED = 0.5;

@@ -81,7 +81,7 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
 
   const readout = box(document, { class: 'readout', 'aria-hidden': 'true' }, 'p');
   const standings = slot(document, 'standings', { 'aria-live': 'polite' });
-  const preview = slot(document, 'preview');
+  const preview = slot(document, 'changes');
   const offers = slot(document, 'offers');
   const table = slot(document, 'rows');
   const fields: Record<'from' | 'to' | 'candidate' | keyof Settings, Field> = {
@@ -107,7 +107,7 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
       button(document, sentences.aboutRate, () => look(null))),
     group(document, sentences.rulerRules, fields.candidate.place, fields.step.place, fields.harmonics.place, fields.cores.place),
     stage, readout,
-    group(document, sentences.candidate,
+    group(document, sentences.choosing,
       button(document, sentences.lowerUsable, () => void attempt(() => chooseNext(-1))), button(document, sentences.higherUsable, () => void attempt(() => chooseNext(1))), back, use, undo),
     standings.place, preview.place, offers.place, table.place, out.place,
   );
@@ -144,13 +144,13 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
     draw();
   }
 
+  /** An end typed beyond the other takes the window along. */
   function typeEnd(end: 'from' | 'to', typed: string): void {
     const value = Number(typed);
-    const next = { ...window(), [end]: value };
-    const sentence = !(value > 0 && value < Infinity) ? sentences.rateNeeded(sentences[end], sentences.quoted(typed))
-      : next.from < next.to ? null : sentences.fromBelowTo(exactFigure(next.from), exactFigure(next.to));
-    if (sentence !== null) fields[end].complain(sentence);
-    else look(next);
+    const { from, to } = window();
+    if (!(value > 0 && value < Infinity)) fields[end].complain(sentences.rateNeeded(sentences[end], sentences.quoted(typed)));
+    else if (end === 'from') look({ from: value, to: value < to ? to : value + to - from });
+    else look({ from: from < value ? from : Math.max(value - to + from, value / 2), to: value });
   }
 
   function typeCandidate(typed: string): void {

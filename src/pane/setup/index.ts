@@ -221,6 +221,7 @@ export const planSection: MakeSection = (surroundings) => {
   async function stored(sentence: string): Promise<void> {
     origin = 'stored';
     remembered = null;
+    draw(); // the way back is there, whatever comes next
     await refresh();
     tell(sentence, 'news');
     // The button that was pressed may be gone.
