@@ -32,6 +32,7 @@ async function start(): Promise<void> {
   const page = workbenchPage(document, {
     open: (file) => host && void open(page, host, file),
     save: () => host && void save(page, host),
+    savePlain: () => host && void savePlain(page, host),
     unsaved: () => current.unsaved,
   });
   page.busy(true);
@@ -120,6 +121,28 @@ async function save(page: Page, host: SheetHost): Promise<void> {
     page.download(name, new Blob([bytes as Uint8Array<ArrayBuffer>], { type: XLSX }));
     nameCurrent(page, name, false);
     page.tell(sentences.saved(name));
+  } catch (error) {
+    page.complain(error instanceof HostFault ? error.message : sentences.cannotSave(name));
+  } finally {
+    page.busy(false);
+  }
+}
+
+/** The workbook as a file for programs without our functions; what the sheet shows stays. */
+async function savePlain(page: Page, host: SheetHost): Promise<void> {
+  const name = current.name.replace(/(\.xlsx)?$/i, ' plain.xlsx');
+  page.busy(true);
+  page.tell(sentences.saving(name));
+  try {
+    const [{ WorkbookFile, writeWorkbook }, { plainCopy }] = await Promise.all([import('./host/file'), import('./plain')]);
+    await host.settled();
+    const file = await WorkbookFile.open(await writeWorkbook(host.save()));
+    const copy = await plainCopy(await file.formulas(), { version: FOLDPLAN_VERSION, date: new Date().toISOString().slice(0, 10) },
+      (done, total) => page.tell(sentences.looking(done, total)));
+    await file.replaceFormulas(copy);
+    page.download(name, new Blob([(await file.save()) as Uint8Array<ArrayBuffer>], { type: XLSX }));
+    const sum = (of: 'formulas' | 'values') => copy.counts.reduce((all, one) => all + one[of], 0);
+    page.tell(sentences.savedPlain(name, sum('formulas'), sum('values')));
   } catch (error) {
     page.complain(error instanceof HostFault ? error.message : sentences.cannotSave(name));
   } finally {

@@ -5,6 +5,7 @@ import { HostFault, type LiveHost, type Place } from '../host/port';
 import { parseAddress } from './address';
 import { columnsSection } from './columns';
 import { handOverSection } from './handover';
+import { unknownBanner } from './handover/banner';
 import { element, toDom } from './element';
 import { type PlanFigures, figuresOf } from './figures';
 import { headlineSection, noticeList } from './page';
@@ -41,9 +42,10 @@ export async function mountPane(host: LiveHost, root: HTMLElement, version: stri
   const surroundings = { document, host, version, tell, refresh };
   const sections = SECTIONS.map((make) => make(surroundings));
   const frame = tabs(document, sentences.sections, sections, showSection);
+  const banner = unknownBanner(surroundings);
   const foot = toDom(document, element('p', { class: 'foot' }, element('a', { href: 'help.html', target: '_blank', rel: 'noopener' }, sentences.reference)));
   root.classList.add('foldplan');
-  root.replaceChildren(faults.place, notices.place, glance.place, frame.place, news.place, foot);
+  root.replaceChildren(faults.place, notices.place, banner.place, glance.place, frame.place, news.place, foot);
 
   function inView(): Section | undefined {
     return sections[frame.current()];
@@ -128,6 +130,7 @@ export async function mountPane(host: LiveHost, root: HTMLElement, version: stri
     }
   }
   await refresh();
+  void banner.look();
 
   return () => {
     answered = Infinity;

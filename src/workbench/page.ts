@@ -11,7 +11,7 @@ export interface Page {
   complain(sentence: string): void;
   /** The selected cell: what screen readers say of it, and for everyone the sentence behind its error, where it has one. */
   showCell(spoken: string, error: string | null): void;
-  /** While something takes its time, neither Open nor Save can be pressed. */
+  /** While something takes its time, nothing can be opened or saved. */
   busy(on: boolean): void;
   /** Asks before changes are lost; resolves to whether they may be. */
   mayDiscard(question: string): Promise<boolean>;
@@ -22,18 +22,20 @@ export interface Page {
 export interface Actions {
   open(file: File): void;
   save(): void;
+  savePlain(): void;
   /** Whether leaving the page would lose something. */
   unsaved(): boolean;
 }
 
 export function workbenchPage(document: Document, actions: Actions): Page {
   const byId = <T extends HTMLElement>(id: string) => document.getElementById(id) as T;
-  const [openButton, saveButton] = [byId<HTMLButtonElement>('open'), byId<HTMLButtonElement>('save')];
+  const [openButton, saveButton, savePlainButton] = ['open', 'save', 'save-plain'].map((id) => byId<HTMLButtonElement>(id)) as [HTMLButtonElement, HTMLButtonElement, HTMLButtonElement];
   const [status, cellError] = [byId('status'), byId('cell-error')];
   const [sheet, pane] = [byId('sheet'), byId('pane')];
 
   takeFiles(document, byId<HTMLInputElement>('chosen-file'), byId('drop-hint'), openButton, (file) => actions.open(file));
   saveButton.addEventListener('click', () => actions.save());
+  savePlainButton.addEventListener('click', () => actions.savePlain());
   takeKeys(document, [openButton, sheet, pane], () => openButton.click(), () => saveButton.click());
   document.defaultView!.addEventListener('beforeunload', (event) => {
     if (actions.unsaved()) event.preventDefault();
@@ -58,8 +60,7 @@ export function workbenchPage(document: Document, actions: Actions): Page {
       renew(cellError, error ?? '');
     },
     busy(on) {
-      openButton.disabled = on;
-      saveButton.disabled = on;
+      for (const button of [openButton, saveButton, savePlainButton]) button.disabled = on;
     },
     mayDiscard(question) {
       const dialog = byId<HTMLDialogElement>('discard');

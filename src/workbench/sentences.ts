@@ -11,6 +11,9 @@ export const sentences = {
   cannotOpen: (file: string) => `${file} cannot be opened: it is damaged, or no workbook (.xlsx).`,
   saving: (file: string) => `Saving ${file}…`,
   saved: (file: string) => `Saved ${file} among your downloads.`,
+  savedPlain: (file: string, formulas: number, values: number) =>
+    `Saved ${file} among your downloads: ${count(formulas, 'FOLD formula')} made native, ${count(values, 'other')} made values. Its last sheet lists them.`,
+  looking: (done: number, total: number) => `Plain copy: looked at ${done} of ${total} formulas.`,
   cannotSave: (file: string) => `${file} could not be saved.`,
   mayDiscard: (file: string, next: string) => `${file} has changes that are not saved. Open ${next} all the same?`,
   cannotStart: 'The workbench could not start: a file of the site is missing or out of date.',

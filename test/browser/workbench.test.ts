@@ -221,6 +221,19 @@ describe('files in the workbench', () => {
     await expectText('#file-name', /^next\.xlsx$/);
   });
 
+  it('saves a plain copy beside the workbook: the same values, and not one FOLD formula', async () => {
+    const before = await saved();
+    const [download] = await Promise.all([page.waitForEvent('download'), page.getByRole('button', { name: 'Save plain copy' }).click()]);
+    expect(download.suggestedFilename()).toBe('Gannet Ness plain.xlsx');
+    const { workbook } = await readWorkbook(new Uint8Array(await readFile(await download.path())));
+    const formulas = workbook.sheets.flatMap((sheet) => Object.values(sheet.cells).flatMap((line) => Object.values(line).flatMap(({ formula }) => (formula === undefined ? [] : [formula]))));
+    expect(formulas.length).toBeGreaterThan(70);
+    expect(formulas.filter((formula) => formula.includes('FOLD'))).toEqual([]);
+    expect(workbook.sheets.map(({ name }) => name)).toEqual([...before.workbook.sheets.map(({ name }) => name), 'Plain copy']);
+    expect(foldedInSheet(workbook.sheets[0]!)).toEqual(foldedInSheet(before.workbook.sheets[0]!));
+    await expectText('#status', 'Saved Gannet Ness plain.xlsx among your downloads: 78 FOLD formulas made native, 5 others made values. Its last sheet lists them.');
+  });
+
   it('counts as changed what is changed, not what is looked at, and as saved what is saved', async () => {
     await page.getByRole('tab', { name: 'Rates and images' }).click();
     await goTo('A6');

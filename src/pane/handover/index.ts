@@ -8,9 +8,10 @@ import { noticeList } from '../page';
 import type { MakeSection } from '../section';
 import { slot } from '../slot';
 import { contentsOf } from './contents';
+import { enterAgain } from './enter-again';
 import { plainSheet, sheetsWithFormulas } from './plain-sheet';
 import { sentences } from './sentences';
-import { type Trouble, isUnknown, troublesIn } from './troubles';
+import { type Trouble, isUnknown, placeOf, troublesIn, unknownSentence } from './troubles';
 
 /** How many cells in error are told one by one. */
 const TOLD = 20;
@@ -19,7 +20,7 @@ const TOLD = 20;
 class Cancelled extends Error {}
 
 export const handOverSection: MakeSection = (surroundings) => {
-  const { document, host, tell, refresh, version } = surroundings;
+  const { document, host, tell, version } = surroundings;
   const attempt = attempts(surroundings);
 
   let contents: Workbook | null = null;
@@ -119,14 +120,8 @@ export const handOverSection: MakeSection = (surroundings) => {
   }
 
   async function reenter(): Promise<void> {
+    await enterAgain(surroundings);
     await look();
-    const unknown = troublesIn(contents!).filter(isUnknown);
-    await host.change({ cells: unknown.map(({ sheet, address, formula }) => ({ reference: referenceTo(sheet, address), cells: [[{ formula }]] })) });
-    await refresh();
-    await look();
-    const left = troublesIn(contents!).filter(isUnknown);
-    if (left.length > 0) tell(sentences.stillUnknown(placeOf(left[0]!)), 'fault');
-    else tell(sentences.reentered(unknown.length), 'news');
   }
 
   return {
@@ -154,9 +149,3 @@ function troubleList(troubles: Trouble[]): Tree[] {
     ...(others.length > TOLD ? [sentences.andMore(others.length - TOLD)] : []),
   ])];
 }
-
-/** For the list, and for the banner above all sections. */
-export const unknownSentence = (unknown: Trouble[]): string =>
-  sentences.unknown(unknown.length, unknown.length === 1 ? placeOf(unknown[0]!) : `${placeOf(unknown[0]!)} to ${placeOf(unknown.at(-1)!)}`);
-
-const placeOf = ({ sheet, address }: Trouble): string => referenceTo(sheet, address);

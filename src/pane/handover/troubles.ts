@@ -2,7 +2,8 @@
 
 import type { Workbook } from '../../host/port';
 import { callsOurs } from '../../plain';
-import { addressOf, cellBox } from '../address';
+import { addressOf, cellBox, referenceTo } from '../address';
+import { sentences } from './sentences';
 
 export interface Trouble {
   sheet: string;
@@ -25,3 +26,9 @@ export function troublesIn({ sheets }: Workbook): Trouble[] {
 
 /** Whether entering the formula again may help: it was typed where the function was not known. */
 export const isUnknown = ({ code }: Trouble): boolean => code === '#NAME?';
+
+export const unknownSentence = (unknown: Trouble[]): string =>
+  sentences.unknown(unknown.length, unknown.length === 1 ? placeOf(unknown[0]!) : `${placeOf(unknown[0]!)} to ${placeOf(unknown.at(-1)!)}`);
+
+/** `Plan!D8` */
+export const placeOf = ({ sheet, address }: Trouble): string => referenceTo(sheet, address);
