@@ -1,7 +1,7 @@
 // Builds the static site (dist/) and the command line (dist-cli/).
 //
 // Options, each as --env name=value:
-//   base      address that the site will be served from (default https://localhost:3000)
+//   base      https address that the site will be served from (default https://localhost:3000)
 //   officejs  "vendor" loads Office.js from its vendor's address (default), "self" puts a copy into dist/office/
 //   development  readable pages, built in seconds
 //   bench     build the benchmark instead, into dist-cli/
@@ -15,7 +15,8 @@ import CustomFunctionsMetadataPlugin from 'custom-functions-metadata-plugin';
 import HtmlPlugin from 'html-webpack-plugin';
 import MiniCssExtractPlugin from 'mini-css-extract-plugin';
 import webpack from 'webpack';
-import { manifestFor } from './manifest/manifest-for.js';
+import { AppPackage } from './manifest/app-package.js';
+import { manifestFor, siteAddress } from './manifest/manifest-for.js';
 import { helpPage } from './src/help/help-page.js';
 import { readFamily, readSentences } from './src/help/sources.js';
 
@@ -82,7 +83,7 @@ const common = (name, mode) => ({
 
 export default async (env) => {
   const mode = env.development ? 'development' : 'production';
-  const base = (env.base ?? 'https://localhost:3000').replace(/\/+$/, '');
+  const base = siteAddress(env.base ?? 'https://localhost:3000');
   const selfHosted = (env.officejs ?? 'vendor') === 'self';
   const officeJs = selfHosted ? 'office/office.js' : VENDOR_OFFICE_JS;
   const page = (name, template) => new HtmlPlugin({
@@ -119,12 +120,14 @@ export default async (env) => {
       new CopyPlugin({
         patterns: [
           { from: at('assets'), to: 'assets', globOptions: { ignore: ['**/readme/**'] } },
-          { from: at('manifest/manifest.xml'), to: 'manifest.xml', transform: () => manifestFor(base, version) },
+          ...['manifest.xml', 'manifest.json'].map((file) => ({ from: at('manifest', file), to: file, transform: () => manifestFor(base, version, file) })),
+          { from: at('manifest/about.html'), to: 'about.html', transform: (page) => page.toString().replaceAll('{{version}}', version) },
           ...(selfHosted
             ? OFFICE_FILES.map((from) => ({ from, to: 'office', context: path.dirname(require.resolve('@microsoft/office-js/dist/office.js')) }))
             : []),
         ],
       }),
+      new AppPackage(),
     ],
     devServer: {
       host: 'localhost', // plans are for this machine alone

@@ -1,6 +1,5 @@
 // The pane inside the spreadsheet program. functions.js, loaded by the same page, has registered the worksheet functions by now.
 
-import type { LiveHost } from './host/port';
 import { OfficeHost } from './host/office/office-host';
 import { mountPane } from './pane';
 
@@ -13,7 +12,7 @@ if (typeof Office === 'undefined') {
   tell('Office.js did not load, so the pane cannot reach the spreadsheet. Check the connection to its address, or use a build that carries its own copy.');
 } else {
   void Office.onReady(async ({ host }) => {
-    if (host === Office.HostType.Excel) await mountPane(new OfficeHost() as unknown as LiveHost, root, FOLDPLAN_VERSION);
+    if (host === Office.HostType.Excel) await mountPane(new OfficeHost(), root, FOLDPLAN_VERSION);
     else tell('This page is the pane of the Foldplan add-in: it works inside a spreadsheet program. Without one, open workbench.html of this site.');
   });
 }

@@ -1,4 +1,5 @@
-// The icons are pictures of one drawing, assets/icon.svg. After a change of the drawing, UPDATE_ICONS=1 draws them anew; look at them.
+// The icons are pictures of two drawings: assets/icon.svg, and assets/outline.svg in white. After a change of a drawing, UPDATE_ICONS=1 draws them
+// anew; look at them.
 
 import { existsSync, readFileSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
@@ -7,8 +8,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { launchBrowser } from './support/browser';
 
 const assets = path.join(import.meta.dirname, '../assets');
-const SIZES = [16, 20, 24, 32, 40, 48, 64, 80];
-const drawing = `data:image/svg+xml;base64,${readFileSync(path.join(assets, 'icon.svg')).toString('base64')}`;
+const ICONS = [...[16, 20, 24, 32, 40, 48, 64, 80, 192].map((size) => ['icon', size] as const), ['outline', 32] as const];
 
 let browser: Browser;
 let page: Page;
@@ -19,8 +19,9 @@ beforeAll(async () => {
 afterAll(() => browser.close());
 
 describe('the icons', () => {
-  it.each(SIZES)('of %i pixels show the drawing', async (size) => {
-    const file = path.join(assets, `icon-${size}.png`);
+  it.each(ICONS)('%s of %i pixels shows the drawing', async (name, size) => {
+    const drawing = `data:image/svg+xml;base64,${readFileSync(path.join(assets, `${name}.svg`)).toString('base64')}`;
+    const file = path.join(assets, `${name}-${size}.png`);
     if (process.env.UPDATE_ICONS) writeFileSync(file, Buffer.from((await page.evaluate(drawn, [drawing, size] as const)).png, 'base64'));
     expect(existsSync(file), `${file} is missing: UPDATE_ICONS=1 npx vitest run test/icons.test.ts`).toBe(true);
     const icon = await page.evaluate(drawn, [`data:image/png;base64,${readFileSync(file).toString('base64')}`, size] as const);

@@ -3,16 +3,17 @@
 
 import { readFileSync } from 'node:fs';
 import path from 'node:path';
-import { SaxesParser } from 'saxes';
 import ts from 'typescript';
 import { describe, expect, it } from 'vitest';
-import { manifestFor } from '../manifest/manifest-for.js';
+import { manifestFor, siteAddress } from '../manifest/manifest-for.js';
 import { NAMESPACE } from '../src/host/sheet/functions-runtime';
 import { dist, siteFile } from './support/browser';
+import { pngSize } from './support/png';
+import { type Element, elements, parseXml } from './support/xml';
 
 const BASE = 'https://localhost:3000';
 const built = readFileSync(path.join(dist, 'manifest.xml'), 'utf8');
-const manifest = parse(built);
+const manifest = parseXml(built);
 
 describe('the manifest', () => {
   it('has its parts in the order that the schema wants', () => {
@@ -84,19 +85,26 @@ describe('the manifest', () => {
 
   it('follows the site to another address', () => {
     const base = 'https://plan.example/tools/foldplan';
-    const moved = addressesOf(parse(manifestFor(base, '1.2.3')));
+    const moved = addressesOf(parseXml(manifestFor(base, '1.2.3')));
     expect(moved).toEqual(addressesOf(manifest).map((address) => address.replace(BASE, base)));
     expect(manifestFor(base, '1.2.3')).not.toMatch(/\{\{|localhost/);
+  });
+
+  it('is made for an https address alone', () => {
+    expect(['https://tools.example/foldplan/', 'https://tools.example:8443'].map(siteAddress)).toEqual(['https://tools.example/foldplan', 'https://tools.example:8443']);
+    for (const text of ['tools.example', 'http://tools.example', 'https://tools.example/?a=1', 'https://me@tools.example', 'https://tools.example/a&b', '']) {
+      expect(() => siteAddress(text), text).toThrow(`base must be the https address of a site, such as https://tools.example/foldplan; got ${text}`);
+    }
   });
 
   it('shows icons in the sizes that it says, those that the program insists on among them', () => {
     for (const icon of all('Icon')) {
       const sizes = icon.children.map(({ attributes }) => Number(attributes.size));
       expect(sizes).toEqual(expect.arrayContaining([16, 32, 80]));
-      for (const { attributes: { size, resid } } of icon.children) expect(pngSize(resource(resid!)), resid).toEqual([Number(size), Number(size)]);
+      for (const { attributes: { size, resid } } of icon.children) expect(sizeOf(resource(resid!)), resid).toEqual([Number(size), Number(size)]);
     }
-    expect(pngSize(only('IconUrl').attributes.DefaultValue!)).toEqual([32, 32]);
-    expect(pngSize(only('HighResolutionIconUrl').attributes.DefaultValue!)).toEqual([64, 64]);
+    expect(sizeOf(only('IconUrl').attributes.DefaultValue!)).toEqual([32, 32]);
+    expect(sizeOf(only('HighResolutionIconUrl').attributes.DefaultValue!)).toEqual([64, 64]);
   });
 
   it('requires the versions of the program that the code needs, and no later ones', () => {
@@ -105,39 +113,6 @@ describe('the manifest', () => {
     expect(required).toEqual({ ...setsCalled(['src/main-office.ts', 'src/functions/index.ts']), SharedRuntime: '1.1' });
   });
 });
-
-interface Element {
-  name: string;
-  attributes: Record<string, string>;
-  children: Element[];
-  text: string;
-}
-
-/** @throws Error where the text is not well-formed, namespaces included */
-function parse(xml: string): Element {
-  const parser = new SaxesParser({ xmlns: true });
-  const root: Element = { name: '', attributes: {}, children: [], text: '' };
-  const open = [root];
-  parser.on('error', (error) => {
-    throw error;
-  });
-  parser.on('opentag', ({ name, attributes }) => {
-    const values = Object.fromEntries(Object.entries(attributes).map(([key, { value }]) => [key, value]));
-    const element: Element = { name, attributes: values, children: [], text: '' };
-    open.at(-1)!.children.push(element);
-    open.push(element);
-  });
-  parser.on('text', (text) => {
-    open.at(-1)!.text += text;
-  });
-  parser.on('closetag', () => open.pop());
-  parser.write(xml).close();
-  return root.children[0]!;
-}
-
-function elements(within: Element): Element[] {
-  return [within, ...within.children.flatMap(elements)];
-}
 
 function all(name: string): Element[] {
   return elements(manifest).filter((element) => element.name === name);
@@ -157,14 +132,12 @@ function addressesOf(within: Element): string[] {
   return elements(within).map(({ attributes }) => attributes.DefaultValue ?? '').filter((value) => /^\w+:\/\//.test(value));
 }
 
-/** Width and height as the file itself tells. */
-function pngSize(address: string): [number, number] {
-  const { body } = siteFile(address.slice(BASE.length))!;
-  expect(body.toString('latin1', 1, 4)).toBe('PNG');
-  return [body.readUInt32BE(16), body.readUInt32BE(20)];
-}
+const sizeOf = (address: string) => pngSize(siteFile(address.slice(BASE.length))!.body);
 
-/** The latest set of each kind that the code needs: every member of the vendor's libraries is declared with its own. */
+/**
+ * The latest set of each kind that the code needs: every member of the vendor's libraries is declared with its own. A file that asks the
+ * program for a later set can do without it.
+ */
 function setsCalled(entries: string[]): Record<string, string> {
   const root = path.join(import.meta.dirname, '..');
   const { config } = ts.readConfigFile(path.join(root, 'tsconfig.json'), (file) => readFileSync(file, 'utf8')) as { config: object };
@@ -172,16 +145,19 @@ function setsCalled(entries: string[]): Record<string, string> {
   const program = ts.createProgram(entries.map((file) => path.join(root, file)), options);
   const checker = program.getTypeChecker();
   const latest: Record<string, string> = {};
-  const note = (declaration: ts.Declaration) => {
+  const note = (declaration: ts.Declaration, asked: Record<string, string>) => {
     if (!/@types\/(office-js|custom-functions-runtime)\//.test(declaration.getSourceFile().fileName)) return;
     const [, set, version] = /\[Api set: (\w+) ([\d.]+)\]/.exec(declaration.getFullText().slice(0, declaration.getLeadingTriviaWidth())) ?? [];
-    if (set && compareVersions(version!, latest[set] ?? '0') > 0) latest[set] = version!;
+    if (set && compareVersions(version!, asked[set] ?? '0') > 0 && compareVersions(version!, latest[set] ?? '0') > 0) latest[set] = version!;
   };
-  const visit = (node: ts.Node): void => {
-    if (ts.isIdentifier(node)) checker.getSymbolAtLocation(node)?.declarations?.forEach(note);
-    ts.forEachChild(node, visit);
+  const visit = (node: ts.Node, asked: Record<string, string>): void => {
+    if (ts.isIdentifier(node)) checker.getSymbolAtLocation(node)?.declarations?.forEach((declaration) => note(declaration, asked));
+    ts.forEachChild(node, (child) => visit(child, asked));
   };
-  for (const file of program.getSourceFiles()) if (file.fileName.startsWith(path.join(root, 'src'))) visit(file);
+  for (const file of program.getSourceFiles()) {
+    const asked = [...file.text.matchAll(/isSetSupported\('(\w+)', '([\d.]+)'\)/g)].map(([, set, version]) => [set!, version!]);
+    if (file.fileName.startsWith(path.join(root, 'src'))) visit(file, Object.fromEntries(asked));
+  }
   return latest;
 }
 

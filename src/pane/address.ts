@@ -8,7 +8,8 @@ export interface Box {
   columns: number;
 }
 
-const MOST_ROWS = 1_048_576;
+/** Rows of a sheet. */
+export const MOST_ROWS = 1_048_576;
 const MOST_COLUMNS = 16_384;
 
 /** The sheet of a reference, null where it names none, and its cells; null where the text is no address of cells. */

@@ -17,9 +17,9 @@ export const FREQ = ofTone((f, r, kind) => (kind === 'iq'
   ? tidy(`${f.text}-${r.text}*${turnsBelow(f, r)}`, f, r)
   : tidy(folded(f.text, r.text), f, r)));
 
-export const ZONE = ofTone((f, r, kind) => (kind === 'iq' ? turnsBelow(f, r) : `${halvesBelow(size(f), r)}+1`));
+export const ZONE = ofTone((f, r, kind) => (kind === 'iq' ? turnsBelow(f, r) : `${halvesIn(f, r)}+1`));
 
-export const INVERTED = ofTone((f, r, kind) => (kind === 'iq' ? 'FALSE' : `ISODD(${halvesBelow(size(f), r)})`));
+export const INVERTED = ofTone((f, r, kind) => (kind === 'iq' ? 'FALSE' : `ISODD(${halvesIn(f, r)})`));
 
 export const LOW = ofImage((a, b, r, kind) => (kind === 'iq'
   ? `IF(${withinTurn(a, b, r)},${a.text}-${r.text}*${turnsBelow(a, r)},-${r.text}/2)`
@@ -111,6 +111,12 @@ const folded = (x: string, rate: string): string => `ABS(${x}-${rate}*ROUND(${x}
 
 /** How many half rates lie at or below a frequency. */
 const halvesBelow = (frequency: string, rate: Expression): string => `INT(${settled(`2*${frequency}/${rate.text}`)})`;
+
+/** The same for the size of a frequency. */
+function halvesIn(frequency: Expression, rate: Expression): string {
+  const ratio = `2*${size(frequency)}/${rate.text}`;
+  return `INT(${settled(ratio, ratio)})`;
+}
 
 /** The IQ zone: the odd half rates at or below a frequency, counted from the one below 0. */
 const turnsBelow = (frequency: Expression, rate: Expression): string => `INT((${halvesBelow(frequency.text, rate)}+1)/2)`;

@@ -37,6 +37,9 @@ export function where(conditions: readonly Condition[], then: string, otherwise:
   return known.length === 0 ? then : `IF(${known.length === 1 ? known[0]! : `AND(${known.join(',')})`},${then},${otherwise})`;
 }
 
+/** Whether a cell shows nothing. By the length of its text: where formulas compare a cell with both 0 and "", the embedded sheet takes one for the other. */
+export const isEmpty = (text: string): string => `LEN(${text})=0`;
+
 const isLeftOut = ({ text, literal }: Expression): boolean => text === '' || literal === '';
 
 /** Holds where every argument is a number. Arguments written as text are no numbers, although native formulas take them for such. */
@@ -66,7 +69,7 @@ export function optionalNumber(argument: Expression): { value: string | null; co
   if (isLeftOut(argument) || literal === 0) return { value: null, conditions: [] };
   if (typeof literal === 'number') return { value: text, conditions: [] };
   areNumbers(argument);
-  return { value: `N(${text})`, conditions: [`OR(${text}="",COUNT(${text})=1)`] };
+  return { value: `N(${text})`, conditions: [`OR(${isEmpty(text)},COUNT(${text})=1)`] };
 }
 
 /** A guard, a rejection, a tolerance: an optional number from 0. */
@@ -87,21 +90,20 @@ export function byWord<T extends string>(argument: Expression, words: readonly T
     return write(word);
   }
   const said = `LOWER(TRIM(${text}))`;
-  const known = `IF(OR(${text}="",${text}=0,${said}="${first}"),${write(first)},${WRONG})`;
+  const known = `IF(OR(${isEmpty(text)},${text}=0,${said}="${first}"),${write(first)},${WRONG})`;
   return others.reduceRight((rest, word) => `IF(${said}="${word}",${write(word)},${rest})`, known);
 }
 
 /** "" for a row without a tone, else the result. */
 export function unlessBlank(tone: Expression, result: string): string {
-  if (isLeftOut(tone)) return '""';
-  return typeof tone.literal === 'number' ? result : `IF(${tone.text}="","",${result})`;
+  return typeof tone.literal === 'number' ? result : `IF(${isEmpty(tone.text)},"",${result})`;
 }
 
 /** "" for a row without a band, else the result. Two edges of 0 are no band. */
 export function unlessNoBand(low: Expression, high: Expression, result: string): string {
   const isBlank = (edge: Expression): Condition | false => {
-    if (isLeftOut(edge) || edge.literal === 0) return null;
-    return edge.literal === undefined ? `OR(${edge.text}="",${edge.text}=0)` : false;
+    if (edge.literal === 0) return null;
+    return edge.literal === undefined ? `OR(${isEmpty(edge.text)},${edge.text}=0)` : false;
   };
   const blanks = [isBlank(low), isBlank(high)].filter((one) => one !== null);
   if (blanks.includes(false)) return result;
@@ -116,8 +118,8 @@ export function unlessNoBand(low: Expression, high: Expression, result: string):
 // 1000 half rates, rounding to 12 decimals turns what should be whole into a whole number, and nothing else. Above that the 15 digits of
 // a cell are kept; fewer digits of the decimals can be told apart then, 9 up to 10^6 half rates.
 
-/** A ratio to half the rate, settled to whole where it should be. @param size another ratio, at least as large, that says how exact it is */
-export const settled = (ratio: string, size = ratio): string => `ROUND(${ratio},MIN(12,15-LEN(INT(ABS(${size})))))`;
+/** A ratio to half the rate, settled to whole where it should be. @param size from 0, at least as large: it says how exact the ratio is */
+export const settled = (ratio: string, size = `ABS(${ratio})`): string => `ROUND(${ratio},MIN(12,15-LEN(INT(${size}))))`;
 
 /** A result to the 15 digits of the greatest number that went into it, so that 7.9 is not 7.90000000000001. */
 export const tidy = (result: string, ...from: Expression[]): string => `ROUND(${result},14-INT(LOG10(${greatest(from)})))`;

@@ -1,6 +1,6 @@
 // The row functions of the noise family as native formulas.
 
-import { type Equivalent, type Expression, NONE, NoEquivalent, WRONG, areNumbers, byWord, compares, optionalNumber, unlessBlank, where } from './native';
+import { type Equivalent, type Expression, NONE, NoEquivalent, WRONG, areNumbers, byWord, compares, isEmpty, optionalNumber, unlessBlank, where } from './native';
 import { reasons } from './sentences';
 
 export const JITTERSNR: Equivalent = {
@@ -36,7 +36,7 @@ function processingGain(rate: Expression, bandwidth: Expression): string {
   const gain = where(
     [...kept.conditions, areNumbers(rate), compares(rate, '>', 0), compares(bandwidth, '>', 0), `${kept.value}<=${rate.text}/2`],
     `10*LOG10(${rate.text}/(2*${kept.value}))`, WRONG);
-  return typeof bandwidth.literal === 'number' ? `+${gain}` : `+IF(OR(${bandwidth.text}="",${bandwidth.text}=0),0,${gain})`;
+  return typeof bandwidth.literal === 'number' ? `+${gain}` : `+IF(OR(${isEmpty(bandwidth.text)},${bandwidth.text}=0),0,${gain})`;
 }
 
 export const ENOB: Equivalent = {

@@ -93,11 +93,11 @@ class Copier {
     for (let before = -1; before < this.#lost.size;) {
       before = this.#lost.size;
       for (const { name, text, sheet } of this.source.names) {
-        if (this.#convert(text, this.#single(sheet)) instanceof NoEquivalent) this.#lost.add(name.toLowerCase());
+        if (this.#convertName(text, sheet) instanceof NoEquivalent) this.#lost.add(name.toLowerCase());
       }
     }
     for (const { name, text, sheet } of this.source.names) {
-      const converted = this.#convert(text, this.#single(sheet));
+      const converted = this.#convertName(text, sheet);
       if (converted === null) continue;
       const now = converted instanceof NoEquivalent ? null : converted.formulas[0]![0]!;
       this.#names.push({ name, text: now, ...(sheet !== undefined && { sheet }) });
@@ -122,7 +122,7 @@ class Copier {
 
   convertOthers(): void {
     for (const [index, { sheet, where, text }] of this.source.others.entries()) {
-      const converted = this.#convert(text, this.#single(sheet));
+      const converted = this.#convert(text, { sheet, area: singleCell(0, 0) });
       if (converted === null) continue;
       this.#others.push({ index, text: converted instanceof NoEquivalent ? null : converted.formulas[0]![0]! });
       this.#noteOther(sheet, where, text, converted);
@@ -162,12 +162,14 @@ class Copier {
     });
   }
 
-  #single = (sheet = this.source.sheets[0] ?? ''): SheetArea => ({ sheet, area: singleCell(0, 0) });
+  /** A name stands on no sheet: what it refers to is written with its sheet. */
+  #convertName = (text: string, sheet = this.source.sheets[0] ?? '') => this.#convert(text, { sheet: '', area: singleCell(0, 0) }, sheet);
 
-  #convert(text: string, fills: SheetArea): NativeFormulas | NoEquivalent | null {
+  /** @param from the sheet that references without one mean */
+  #convert(text: string, fills: SheetArea, from = fills.sheet): NativeFormulas | NoEquivalent | null {
     const surroundings: Surroundings = {
       fills,
-      areaOf: (reference) => this.source.areaOf(reference, { sheet: fills.sheet, row: fills.area.top, column: fills.area.left }),
+      areaOf: (reference) => this.source.areaOf(reference, { sheet: from, row: fills.area.top, column: fills.area.left }),
       spillOf: (sheet, row, column) => this.#spills.get(place(sheet, row, column)) ?? { area: singleCell(row, column), dissolved: false },
       isLost: (name) => this.#lost.has(name.toLowerCase()),
     };
@@ -203,9 +205,12 @@ function noteOf({ replaces, rounds, repeats }: NativeFormulas, cells: number): s
 
 /** A formula as a sheet shows it. */
 function shown(formula: string): string {
-  const write = (nodes: readonly Node[]): string => nodes.map((node) => (isCall(node)
-    ? `${sheetFunctionName(node.name)}(${write(node.items)}${node.closed ? ')' : ''}`
-    : node.value.replace(/^_xlpm\./i, ''))).join('');
+  const write = (nodes: readonly Node[]): string => nodes.map((node) => {
+    if (!isCall(node)) return node.value.replace(/^_xlpm\./i, '');
+    const [name, inside] = [sheetFunctionName(node.name), write(node.items)];
+    if (name === 'ANCHORARRAY') return `${inside}#`;
+    return name === 'SINGLE' ? `@${inside}` : `${name}(${inside}${node.closed ? ')' : ''}`;
+  }).join('');
   return `=${write(formulaTree(formula))}`;
 }
 

@@ -1,7 +1,7 @@
 // One formula, as native formulas: one for each cell that it fills.
 
 import { parseA1Ref, parseStructRef, tokenTypes } from '@borgar/fx/xlsx';
-import { type Area, cellAddress, columnsOf, isSingle, rowsOf, sheetPrefix } from '../formula/address';
+import { type Area, cellAddress, columnsOf, isSingle, parseArea, rowsOf, sheetPrefix } from '../formula/address';
 import { givesArray, isOfSingleValues, takesRange } from '../formula/array-arguments';
 import { type Call, type Node, argumentsOf, formulaTree, isCall, isOperator, isReference, isSpace, textOf } from '../formula/formula-tree';
 import { isOurs, sheetFunctionName } from '../formula/function-names';
@@ -158,6 +158,7 @@ class Conversion {
   #ours(name: string, call: Call, manner: Manner): string {
     const equivalent = EQUIVALENTS[name.slice('FOLD.'.length)];
     if (!equivalent) throw new NoEquivalent(reasons.noEquivalent(name));
+    if (call.items.some((node) => isOperator(node, '{'))) throw new NoEquivalent(reasons.together);
     const given = argumentsOf(call);
     if (given.length < equivalent.least || given.length > equivalent.most) throw new NoEquivalent(reasons.count(name));
     if (manner === 'whole' && !this.#scalar && !given.every((nodes) => this.#isScalar(nodes))) throw new NoEquivalent(reasons.together);
@@ -181,7 +182,7 @@ class Conversion {
   /** The part of a reference that belongs to the cell of the block. */
   #element(reference: string): string {
     const kept = this.#kept(reference);
-    const meant = this.surroundings.areaOf(reference);
+    const meant = this.#areaOf(reference);
     if (!meant) {
       if (this.#isOneCell) return kept;
       throw new NoEquivalent(reasons.together);
@@ -210,7 +211,7 @@ class Conversion {
 
   /** The one cell of a range that stands in the formula's row or column. */
   #beside(reference: string): string {
-    const meant = this.surroundings.areaOf(reference);
+    const meant = this.#areaOf(reference);
     if (!meant) throw new NoEquivalent(reasons.together);
     const { top, left, bottom, right } = meant.area;
     const { top: row, left: column } = this.surroundings.fills.area;
@@ -228,7 +229,7 @@ class Conversion {
     const isFunction = isCall(node) && sheetFunctionName(node.name).toUpperCase() === 'ANCHORARRAY';
     if (!isFunction && !(isReference(node) && isOperator(nodes[i + 1], '#'))) return null;
     const reference = textOf(isFunction ? node.items : [node]);
-    const anchor = this.surroundings.areaOf(reference);
+    const anchor = this.#areaOf(reference);
     if (!anchor || !isSingle(anchor.area)) return null;
     const { area, dissolved } = this.surroundings.spillOf(anchor.sheet, anchor.area.top, anchor.area.left);
     return { sheet: anchor.sheet, area, dissolved, reference, text: isFunction ? textOf([node]) : `${reference}#` };
@@ -250,18 +251,27 @@ class Conversion {
 
   // How much something is
 
+  /** The cells that a reference means; those of other workbooks by their address alone. */
+  #areaOf(reference: string): SheetArea | null {
+    const found = this.surroundings.areaOf(reference);
+    if (found) return found;
+    const parsed = parseA1Ref(reference);
+    const area = parsed && 'range' in parsed ? parseArea(reference.slice(reference.lastIndexOf('!') + 1)) : null;
+    return area && { sheet: reference.slice(0, reference.lastIndexOf('!')), area };
+  }
+
   /** Whether a node by itself may be more than one value. */
   #isSeveral(node: Node): boolean {
     if (isCall(node)) return givesArray(sheetFunctionName(node.name)) || sheetFunctionName(node.name).toUpperCase() === 'ANCHORARRAY';
     if (isOperator(node, '{') || isOperator(node, ':') || isOperator(node, '#')) return true;
-    const meant = isReference(node) ? this.surroundings.areaOf(node.value) : null;
+    const meant = isReference(node) ? this.#areaOf(node.value) : null;
     return meant !== null && !isSingle(meant.area);
   }
 
   #isScalar(nodes: readonly Node[]): boolean {
     return nodes.every((node) => {
       if (isCall(node)) return !this.#isSeveral(node) && (takesRange(node.name, 0) || takesRange(node.name, 1) || this.#isScalar(node.items));
-      return !this.#isSeveral(node) && !(isReference(node) && this.surroundings.areaOf(node.value) === null);
+      return !this.#isSeveral(node) && !(isReference(node) && this.#areaOf(node.value) === null);
     });
   }
 

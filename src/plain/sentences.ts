@@ -18,7 +18,7 @@ export const reasons = {
 
 /** What is to be known of a formula that became native. */
 export const notes = {
-  rounds: 'Computes in binary numbers, so it rounds ratios to half the rate to 12 decimals; it agrees with the exact answer on decimals of up to 12 digits.',
+  rounds: 'Rounds at zone edges: see Rounding above.',
   repeats: 'An argument that is a longer expression is repeated.',
   cells: 'One formula for each cell; a longer column is not followed.',
   names: 'Refers to the cells that a spilled formula filled.',
@@ -47,5 +47,6 @@ export const record = (version: string, date: string): [string, string][] => [
   ['Guard', 'The smallest clear distance wanted between a wanted band and a zone edge, and between its image and any other image; in the unit of the frequencies.'],
   ['Tolerance', 'Parts per million (ppm) by which the sample rate may be off, either way; a margin is that of the worst case.'],
   ['Margin', 'The smaller distance from a band to the two edges of its zone, less the guard; negative where the band crosses an edge, by how much.'],
+  ['Rounding', 'Native formulas compute in binary numbers. Where a result jumps, as at a zone edge, they round ratios to half the rate to 12 decimals: up to 1000 half rates that agrees with the exact answer on decimals of up to 12 digits, above that on fewer.'],
   ['Zone', 'Real sampling: counted from 1, each half a rate wide, even ones inverted. IQ sampling: counted from 0, each a rate wide. An edge counts to the zone above.'],
 ];

@@ -187,7 +187,7 @@ describe('a site that carries its own Office.js', () => {
 
   it('asks its own address alone where the program wants usage reports, and has no part that sends them', async () => {
     const host = await openInWebHost(browser, site, BASE, played(contractWorkbook), { usageReports: true });
-    await host.addIn.locator('#pane').getByText('Fold_Rate').waitFor();
+    await host.addIn.locator('#pane').getByText('Sample rate', { exact: true }).waitFor();
     expect(host.watched.strayRequests).toEqual([`404 ${BASE}/office/telemetry/oteljs_agave.js`]);
     await host.close();
   });

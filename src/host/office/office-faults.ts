@@ -26,11 +26,18 @@ export const faults = {
   sizeDiffers: (reference: string, has: string, got: string) => new HostFault(`${reference} has ${has} cells; ${got} were to be written.`),
   notWritable: (reference: string, value: number) => new HostFault(`${reference} was not written: no cell can hold ${value}.`),
 
+  sheetExists: (name: string) => new HostFault(`The workbook has a sheet called ${name} already.`),
+  sheetName: (name: string) =>
+    new HostFault(`A sheet can't be called ${JSON.stringify(name)}: a name has 1 to 31 characters, none of them [ ] : * ? / \\, and no ' at an end.`),
+  noSheet: (name: string) => new HostFault(`This workbook has no sheet called ${name}.`),
+  noTable: (name: string) => new HostFault(`This workbook has no table called ${name}.`),
+  changedSince: (what: string) => new HostFault(`${what} changed since, so the earlier change stays; take it back by hand.`),
+  noStart: () => new HostFault('The functions could not be made to start with this workbook; opening the pane starts them.'),
+
   /** The program answered with an error. */
   refused: (what: string, error: OfficeError) => new HostFault(`${what}: ${reason(error)}.`),
   /** It did so half-way, and then would not take back the half. */
-  halfWritten: (reference: string, error: OfficeError) =>
-    new HostFault(`${reference} may be written in part, so undo or check it: ${reason(error)}.`),
+  halfWritten: (what: string, error: OfficeError) => new HostFault(`${what} may be written in part, so undo or check it: ${reason(error)}.`),
 };
 
 /** What every error of the client library carries. */

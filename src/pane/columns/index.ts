@@ -34,7 +34,7 @@ export const columnsSection: MakeSection = (surroundings) => {
   /** The first column as the user gave it; '' for the next that is free. */
   let chosen = '';
   let taken: string[] = [];
-  let done: { undo: () => Promise<void>; sheet: string; box: Box; title: string } | null = null;
+  let done: { undo: () => Promise<void>; sheet: string; box: Box; title: string; error: string | null } | null = null;
 
   // The page
 
@@ -191,7 +191,7 @@ export const columnsSection: MakeSection = (surroundings) => {
       draw();
       return tell(sentences.notWritten(takenSentence()), 'fault');
     }
-    done = { undo: await host.change(change), sheet, box, title: titleIn(change) };
+    done = { undo: await host.change(change), sheet, box, title: titleIn(change), error: null };
     chosen = '';
     draw(); // the way back is there, whatever comes next
     await refresh();
@@ -221,7 +221,10 @@ export const columnsSection: MakeSection = (surroundings) => {
     if (of.title !== '' && header?.values[0]?.[0] !== of.title) {
       done = null;
       draw();
-    } else if (error !== null) tell(error, 'fault');
+    } else if (error !== of.error) {
+      of.error = error;
+      tell(error ?? sentences.inserted(of.box.columns, addressOf(of.box)), error === null ? 'news' : 'fault');
+    }
   }
 
   let looks = 0;

@@ -12,7 +12,7 @@ import type { MakeSection } from '../section';
 import type { NameKey } from '../sentences';
 import { slot } from '../slot';
 import {
-  type CellKey, CELL_KEYS, type Checked, type Draft, checkDraft, draftOf, draftOfProposal, emptyDraft, extendedNames, namesOf, shown, withField,
+  CELL_KEYS, type Checked, type Draft, checkDraft, draftOf, draftOfProposal, emptyDraft, extendedNames, namesOf, shown, withField,
 } from './draft';
 import { planForm } from './form';
 import { newCells } from './new-cells';
@@ -166,7 +166,8 @@ export const planSection: MakeSection = (surroundings) => {
     await readSheets();
     const next = withField(draft, key, { text: '', why: '', starts: draft.fields[key].starts ?? (key === 'rate' ? '' : '0') });
     const room = await roomFor(next);
-    change(room ? withField(next, key, { why: sentences.willBeWritten(sentences.newLabels[key as CellKey], addressOf(room.box)) }) : next);
+    const made = CELL_KEYS.filter((one) => room?.values[one]);
+    change(made.reduce((all, one) => withField(all, one, { why: sentences.willBeWritten(sentences.newLabels[one], addressOf(labelled(room!.values[one]!.box))) }), next));
     place.querySelector<HTMLInputElement>(`#foldplan-${key}-starts`)?.focus();
   }
 
@@ -249,6 +250,9 @@ export const planSection: MakeSection = (surroundings) => {
     },
   };
 };
+
+/** A new cell with its label and its unit on either side. */
+const labelled = (value: Box): Box => ({ ...value, column: value.column - 1, columns: 3 });
 
 /** The plan with a row for headers, for which room is kept. */
 function tableBox({ edges }: Draft, boxes: Checked['boxes']): { sheet: string; box: Box } | null {

@@ -1,7 +1,7 @@
 // The plan as a table in its sheet: its rows and headers, and what has happened to it since it was set up.
 
 import type { CellValue, LiveHost } from '../../host/port';
-import { type Box, addressOf, cellBox, parseAddress, referenceTo } from '../address';
+import { type Box, MOST_ROWS, addressOf, cellBox, parseAddress, referenceTo } from '../address';
 import type { Edges, Places } from '../plan';
 import { NAMES, type NameKey } from '../sentences';
 import { type ColumnKind, columnOf, isUnit, unitOf } from './header-words';
@@ -56,8 +56,8 @@ export async function readTable(host: LiveHost, edges: Edges, places: Places): P
   const [left, right] = [Math.min(...all), Math.max(...all)];
   const top = Math.max(0, row - HEADERS);
   const strip = async (from: number, count: number) =>
-    (count === 0 ? [] : (await host.read(referenceTo(sheet, { row: from, column: left, rows: count, columns: right - left + 1 })))?.values ?? []);
-  const [above, below] = await Promise.all([strip(top, row - top), strip(row + rows, LOOK_BELOW)]);
+    (count <= 0 ? [] : (await host.read(referenceTo(sheet, { row: from, column: left, rows: count, columns: right - left + 1 })))?.values ?? []);
+  const [above, below] = await Promise.all([strip(top, row - top), strip(row + rows, Math.min(LOOK_BELOW, MOST_ROWS - row - rows))]);
   return describeTable({ sheet, first: row, rows, left, boxes, above, below, edges });
 }
 

@@ -3,11 +3,16 @@ import { OfficeHost } from '../../../src/host/office/office-host';
 import { type CellInput, type CellValue, type Workbook, HostFault } from '../../../src/host/port';
 import { FunctionError, callFunction } from '../../../src/host/sheet/functions-runtime';
 import { built } from '../../support/built-functions';
-import { contractWorkbook, testHost } from '../../support/host-contract';
+import { contractWorkbook, testHost, testLiveHost } from '../../support/host-contract';
 import { connect } from '../../support/played-excel/client-library';
 import { type Evaluate, WorkbookModel } from '../../support/played-excel/workbook-model';
 
 testHost('the spreadsheet program', async (workbook) => ({ ...open(workbook), close: async () => {} }));
+
+testLiveHost('the spreadsheet program', async (workbook) => {
+  const opened = open(workbook);
+  return { ...opened, state: () => structuredClone(opened.workbook.snapshot()), close: async () => {} };
+});
 
 describe('reading from the spreadsheet program', () => {
   it('tells blank cells, empty texts, errors and texts that look like errors apart', async () => {

@@ -79,7 +79,7 @@ describe('the section Plan', () => {
     await expect.poll(() => open.text()).toContain('will be written to A4:C4');
     type('Sample rate to begin with', '409,6');
     await press('New cell for guard');
-    await expect.poll(() => open.text()).toContain('will be written to A3:C4');
+    await expect.poll(() => open.text()).toMatch(/“Sample rate”, and the value will be written to A3:C3(.|\n)*“Guard”, and the value will be written to A4:C4/);
     await press('Use this plan');
     await said().toMatchObject({ news: 'The plan is stored in the workbook.' });
     expect(await values('Plan!A1:C6')).toEqual([['A title', null, null], [null, null, null], ['Sample rate', 409.6, 'MHz'], ['Guard', 0, 'MHz'], [null, null, null], ['Low (MHz)', 'High (MHz)', null]]);

@@ -9,6 +9,29 @@ export class Served {
   _RemoveReference(): void {}
 }
 
+/** Objects that are loaded one by one: `items/name`. */
+export abstract class ServedList<T extends Served> extends Served {
+  abstract readonly all: readonly T[];
+
+  GetItemAt(index: number): T {
+    const item = this.all[index];
+    if (!item) throw new ProgramError('InvalidArgument');
+    return item;
+  }
+
+  GetItem(key: string): T {
+    const item = this.found(key);
+    if (!item) throw new ProgramError('ItemNotFound', 'The requested resource does not exist.');
+    return item;
+  }
+
+  GetItemOrNullObject(key: string): T | null {
+    return this.found(key) ?? null;
+  }
+
+  protected abstract found(key: string): T | undefined;
+}
+
 /** An error with one of the program's own codes. */
 export class ProgramError extends Error {
   constructor(readonly code: string, message = `The program says ${code}.`) {
@@ -125,8 +148,12 @@ function identity(target: Served): object {
   return { ...(_ReferenceId && { _ReferenceId }), ...(Id && { Id }) };
 }
 
-const query = (target: Served, names: string[]): object =>
-  Object.fromEntries(names.filter((name) => name !== 'isNullObject').map((name) => {
-    const known = name[0]!.toUpperCase() + name.slice(1);
-    return [known, member(target, known)];
-  }));
+/** Of a list, the library asks for the members of its items. */
+function query(target: Served, names: string[]): object {
+  const asked = names.filter((name) => name !== 'isNullObject').map((name) => name[0]!.toUpperCase() + name.slice(1));
+  const own = target instanceof ServedList ? asked.filter((name) => name in target) : asked;
+  const values = Object.fromEntries(own.map((name) => [name, member(target, name)]));
+  const ofItems = asked.filter((name) => !own.includes(name));
+  if (ofItems.length === 0) return values;
+  return { ...values, _Items: (target as ServedList<Served>).all.map((item) => ({ ...identity(item), ...query(item, ofItems) })) };
+}

@@ -4,6 +4,7 @@ import { readFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
 import vm from 'node:vm';
 import { type Batch, type Root, ProgramError, answerBatch } from './batch';
+import { addNotes } from './later-library';
 import type { WorkbookModel } from './workbook-model';
 
 export interface Connection {
@@ -14,13 +15,26 @@ export interface Connection {
   failAt(step: number, code: string): void;
   /** Whether that failure has happened. */
   hasFailed(): boolean;
+  /** How the add-in was asked to start with the workbook; undefined where it was not asked. */
+  startup(): string | undefined;
   /** Lets every event reach its listeners. */
   settle(): Promise<void>;
 }
 
-/** Connects the library, which becomes the global `Excel` of this test file, with a workbook. */
-export function connect(workbook: WorkbookModel): Connection {
+/**
+ * Connects the library, which becomes the global `Excel` of this test file, with a workbook.
+ * @param version of the library's requests that program and library know; notes came with 1.18
+ */
+export function connect(workbook: WorkbookModel, version = 1.18): Connection {
   const { OfficeExtension: library } = loadLibrary();
+  addNotes(version >= 1.18);
+  let startup: string | undefined;
+  const office = {
+    StartupBehavior: { load: 'Load' },
+    context: { requirements: { isSetSupported: (set: string, wanted: string) => set === 'ExcelApi' && later(version) >= later(wanted) } },
+    addin: { setStartupBehavior: async (behavior: string) => { startup = behavior; } },
+  };
+  Object.assign(globalThis, { Office: office });
   const root: Root = { workbook, made: {}, kept: new Map() };
   let failure: { step: number; code: string } | null = null;
   let failed = false;
@@ -70,9 +84,13 @@ export function connect(workbook: WorkbookModel): Connection {
       failed = false;
     },
     hasFailed: () => failed,
+    startup: () => startup,
     settle: () => new Promise((settled) => setTimeout(settled)),
   };
 }
+
+/** 1.9 comes before 1.18. */
+const later = (version: number | string): number => Number(String(version).split('.')[1]);
 
 /** The part of the library that its own tests use. */
 interface Library {

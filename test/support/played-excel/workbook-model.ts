@@ -2,14 +2,19 @@
 // formula or text; formulas of worksheet functions compute and spill; events tell of it. It is a model: it cannot prove what the
 // program itself does, only that the host and the program's client library understand each other.
 
-import type { CellValue, Workbook } from '../../../src/host/port';
-import { ProgramError, Served } from './batch';
+import { type CellValue, type Sheet, type Workbook, NEGATIVE } from '../../../src/host/port';
+import { ProgramError, Served, ServedList } from './batch';
+import { ColumnModel, ConditionalFormatsModel, RangeFormatModel, type Mark } from './looks-model';
+import { NotesModel } from './notes-model';
+import { ShapesModel } from './shapes-model';
+import { TablesModel } from './tables-model';
+import { type Box, boxAddress, cellBox, inside, parseAddress, place } from './boxes';
 
 /** Computes `=FOLD.NAME(reference, …)`: rows of cells, an error as an object. */
 export type Evaluate = (name: string, args: (CellValue[][] | null)[]) => CellValue[][];
 
 export interface WorkbookEvent {
-  type: typeof CHANGED | typeof CALCULATED;
+  type: typeof CHANGED | typeof CALCULATED | typeof SELECTED | typeof ACTIVATED;
   sheet: WorksheetModel;
   message: object;
 }
@@ -17,46 +22,72 @@ export interface WorkbookEvent {
 /** Numbers of the protocol. */
 export const CHANGED = 10;
 export const CALCULATED = 16;
+export const SELECTED = 14;
+export const ACTIVATED = 11;
 
-interface CellModel {
+export interface CellModel {
   /** What the cell holds; "" is a blank cell. */
   value: number | string | boolean | { error: string };
   formula?: string;
   format: string;
+  bold?: boolean;
   /** The cell whose formula fills this one. */
   filledBy?: string;
-}
-
-interface Box {
-  row: number;
-  column: number;
-  rows: number;
-  columns: number;
 }
 
 export class WorkbookModel extends Served {
   readonly Worksheets: WorksheetsModel;
   readonly Names: NamesModel;
+  readonly Tables = new TablesModel();
   readonly sheets: WorksheetModel[];
+  active: WorksheetModel;
+  /** Null while something else than cells is selected. */
+  selected: RangeModel | null;
+  private made = 0;
   private listeners = new Set<(event: WorkbookEvent) => void>();
 
   constructor(workbook: Workbook, readonly evaluate: Evaluate) {
     super();
-    this.sheets = workbook.sheets.map((sheet, i) => new WorksheetModel(this, `{sheet-${i + 1}}`, sheet.name));
-    this.Worksheets = new WorksheetsModel(this.sheets);
+    this.sheets = [];
+    this.Worksheets = new WorksheetsModel(this);
     this.Names = new NamesModel(this, { ...workbook.names });
-    for (const [i, { cells }] of workbook.sheets.entries()) {
-      for (const [row, line] of Object.entries(cells)) {
-        for (const [column, { value, formula }] of Object.entries(line)) {
-          this.sheets[i]!.put(Number(row), Number(column), formula === undefined ? { value: value ?? '', format: 'General' } : { value: '', formula, format: 'General' });
-        }
-      }
-    }
+    for (const sheet of workbook.sheets) this.addSheet(sheet.name).fillFrom(sheet);
+    this.active = this.sheets[0]!;
+    this.selected = this.active.GetRange('A1');
     this.calculate();
   }
 
   listen(listener: (event: WorkbookEvent) => void): void {
     this.listeners.add(listener);
+  }
+
+  GetSelectedRange(): RangeModel {
+    if (!this.selected) throw new ProgramError('InvalidSelection', 'The current selection is invalid for this operation.');
+    return this.selected;
+  }
+
+  addSheet(name: string): WorksheetModel {
+    const sheet = new WorksheetModel(this, `{sheet-${++this.made}}`, name);
+    this.sheets.push(sheet);
+    return sheet;
+  }
+
+  removeSheet(sheet: WorksheetModel): void {
+    this.sheets.splice(this.sheets.indexOf(sheet), 1);
+    if (this.active === sheet) this.active = this.sheets[0]!;
+  }
+
+  select(range: RangeModel): void {
+    this.activate(range.Worksheet);
+    this.selected = range;
+    this.tell({ type: SELECTED, sheet: range.Worksheet, message: { address: range.local, worksheetId: range.Worksheet.Id } });
+  }
+
+  activate(sheet: WorksheetModel): void {
+    if (this.active === sheet) return;
+    this.active = sheet;
+    this.selected = sheet.GetRange('A1');
+    this.tell({ type: ACTIVATED, sheet, message: { worksheetId: sheet.Id } });
   }
 
   /** After an edit: formulas compute, and the events are told. */
@@ -71,14 +102,20 @@ export class WorkbookModel extends Served {
     const bang = reference.lastIndexOf('!');
     if (bang < 0 && this.Names.refersTo[reference] !== undefined) return this.range(this.Names.refersTo[reference]);
     const name = reference.slice(0, Math.max(0, bang)).replace(/^'|'$/g, '').replaceAll("''", "'");
-    const sheet = bang < 0 ? this.sheets[0] : this.sheets.find((s) => s.Name === name);
+    const sheet = bang < 0 ? this.active : this.sheets.find((s) => s.Name === name);
     const box = parseAddress(reference.slice(bang + 1));
     return sheet && box && new RangeModel(sheet, box);
   }
 
   /** Everything that a user could lose. */
   snapshot(): unknown {
-    return this.sheets.map((sheet) => [sheet.Name, sheet.snapshot()]);
+    const names = Object.fromEntries(Object.entries(this.Names.refersTo).sort(([a], [b]) => (a < b ? -1 : 1)));
+    return { sheets: this.sheets.map((sheet) => [sheet.Name, sheet.snapshot()]), names, tables: this.Tables.all.map(({ Name, range }) => [Name, range.Address]) };
+  }
+
+  /** A name has come to mean something else. */
+  named(): void {
+    this.calculate();
   }
 
   private calculate(): void {
@@ -110,43 +147,87 @@ export class WorkbookModel extends Served {
 }
 
 /** Events are registered at the collection; the library sorts out whom they concern. */
-class WorksheetsModel extends Served {
-  constructor(private sheets: WorksheetModel[]) {
+class WorksheetsModel extends ServedList<WorksheetModel> {
+  constructor(private workbook: WorkbookModel) {
     super();
   }
 
-  GetActiveWorksheet(): WorksheetModel {
-    return this.sheets[0]!;
+  get all(): WorksheetModel[] {
+    return this.workbook.sheets;
   }
 
-  GetItemOrNullObject(key: string): WorksheetModel | null {
-    return this.sheets.find((sheet) => sheet.Name === key || sheet.Id === key) ?? null;
+  GetActiveWorksheet(): WorksheetModel {
+    return this.workbook.active;
+  }
+
+  Add(name: string): WorksheetModel {
+    return this.workbook.addSheet(name);
+  }
+
+  protected found(key: string): WorksheetModel | undefined {
+    return this.all.find((sheet) => sheet.Name.toLowerCase() === key.toLowerCase() || sheet.Id === key);
   }
 
   _RegisterCalculatedEvent(): void {}
   _UnregisterCalculatedEvent(): void {}
   _RegisterDataChangedEvent(): void {}
   _UnregisterDataChangedEvent(): void {}
+  _RegisterSelectionChangedEvent(): void {}
+  _UnregisterSelectionChangedEvent(): void {}
+  _RegisterActivatedEvent(): void {}
+  _UnregisterActivatedEvent(): void {}
 }
 
-class NamesModel extends Served {
+class NamesModel extends ServedList<NamedItemModel> {
   constructor(private workbook: WorkbookModel, readonly refersTo: Record<string, string>) {
     super();
   }
 
-  GetItemOrNullObject(name: string): NamedItemModel | null {
-    const refersTo = this.refersTo[name];
-    return refersTo === undefined ? null : new NamedItemModel(name, this.workbook.range(refersTo) ?? null);
+  get all(): NamedItemModel[] {
+    return Object.keys(this.refersTo).map((name) => new NamedItemModel(this.workbook, name));
+  }
+
+  Add(name: string, formula: string): NamedItemModel {
+    if (this.found(name)) throw new ProgramError('ItemAlreadyExists');
+    if (!formula.startsWith('=')) throw new ProgramError('InvalidArgument');
+    this.refersTo[name] = formula.slice(1);
+    this.workbook.named();
+    return this.GetItem(name);
+  }
+
+  protected found(key: string): NamedItemModel | undefined {
+    return this.all.find(({ Name }) => Name.toLowerCase() === key.toLowerCase());
   }
 }
 
 class NamedItemModel extends Served {
-  constructor(readonly Name: string, private range: RangeModel | null) {
+  readonly Comment = '';
+  readonly Visible = true;
+
+  constructor(private workbook: WorkbookModel, readonly Name: string) {
     super();
   }
 
+  get Id(): string {
+    return this.Name;
+  }
+
+  get Formula(): string {
+    return `=${this.workbook.Names.refersTo[this.Name]!}`;
+  }
+
+  set Formula(formula: string) {
+    this.workbook.Names.refersTo[this.Name] = formula.slice(1);
+    this.workbook.named();
+  }
+
   GetRangeOrNullObject(): RangeModel | null {
-    return this.range;
+    return this.workbook.range(this.workbook.Names.refersTo[this.Name]!) ?? null;
+  }
+
+  Delete(): void {
+    delete this.workbook.Names.refersTo[this.Name];
+    this.workbook.named();
   }
 }
 
@@ -154,10 +235,53 @@ const BLANK: CellModel = { value: '', format: 'General' };
 
 export class WorksheetModel extends Served {
   isProtected = false;
+  /** Where a filter hides cells. */
+  filtered: Box | null = null;
+  readonly columns = new Map<number, ColumnModel>();
+  readonly marks: Mark[] = [];
+  readonly Notes = new NotesModel(this);
+  readonly Shapes = new ShapesModel(this);
   private grid = new Map<string, CellModel>();
 
-  constructor(readonly workbook: WorkbookModel, readonly Id: string, readonly Name: string) {
+  constructor(readonly workbook: WorkbookModel, readonly Id: string, public Name: string) {
     super();
+  }
+
+  fillFrom({ cells, columns, notes = {}, marksNegative = [] }: Sheet): void {
+    for (const [row, line] of Object.entries(cells)) {
+      for (const [column, { value, formula, style: { numberFormat: format = 'General', bold } = {} }] of Object.entries(line)) {
+        const spilled = formula === undefined && isFilled(cells, Number(row), Number(column));
+        this.put(Number(row), Number(column), { ...(formula === undefined ? { value: spilled ? '' : value ?? '' } : { value: '', formula }), format, ...(bold && { bold }) });
+      }
+    }
+    for (const [column, { width }] of Object.entries(columns)) if (width !== undefined) this.column(Number(column)).ColumnWidth = width * 0.75;
+    for (const [address, text] of Object.entries(notes)) this.Notes.texts.set(address, text);
+    for (const address of marksNegative) this.marks.push({ box: parseAddress(address)!, type: 'CellValue', rule: { formula1: '=0', operator: 'LessThan' }, color: NEGATIVE.color, fill: NEGATIVE.fill });
+  }
+
+  column(index: number): ColumnModel {
+    if (!this.columns.has(index)) this.columns.set(index, new ColumnModel());
+    return this.columns.get(index)!;
+  }
+
+  /** Behind the others; the name is the program's own until another is given. */
+  Copy(position: string): WorksheetModel {
+    if (position !== 'End') throw new ProgramError('NotImplemented');
+    const copy = this.workbook.addSheet(`${this.Name} (2)`);
+    for (const [key, cell] of this.grid) copy.grid.set(key, { ...cell });
+    for (const [index, column] of this.columns) Object.assign(copy.column(index), column);
+    copy.marks.push(...this.marks.map((mark) => ({ ...mark })));
+    for (const [address, text] of this.Notes.texts) copy.Notes.texts.set(address, text);
+    this.workbook.edited(copy, '');
+    return copy;
+  }
+
+  Delete(): void {
+    this.workbook.removeSheet(this);
+  }
+
+  Activate(): void {
+    this.workbook.activate(this);
   }
 
   GetRange(address: string): RangeModel {
@@ -190,7 +314,7 @@ export class WorksheetModel extends Served {
   }
 
   unspill(): void {
-    for (const [key, cell] of this.grid) if (cell.filledBy) this.grid.set(key, { value: '', format: cell.format });
+    for (const [key, cell] of this.grid) if (cell.filledBy) this.grid.set(key, { value: '', format: cell.format, bold: cell.bold });
   }
 
   /** Puts a formula's result into its cell and, where there is room, into those below and beside it. */
@@ -203,7 +327,7 @@ export class WorksheetModel extends Served {
       return;
     }
     own.value = result[0]![0] ?? '';
-    for (const { r, c, value } of others) this.put(r, c, { value, format: this.at(r, c).format, filledBy: anchor });
+    for (const { r, c, value } of others) this.put(r, c, { value, format: this.at(r, c).format, bold: this.at(r, c).bold, filledBy: anchor });
   }
 
   /** Whether a formula fills more than its own cell. */
@@ -211,19 +335,41 @@ export class WorksheetModel extends Served {
     return [...this.grid.values()].some(({ filledBy }) => filledBy === anchor);
   }
 
+  /** The block that a formula fills. */
+  filledBy(anchor: string): Box {
+    const cells = [place(anchor), ...[...this.grid].filter(([, { filledBy }]) => filledBy === anchor).map(([key]) => place(key))];
+    const [row, column] = place(anchor);
+    return { row, column, rows: Math.max(...cells.map(([r]) => r)) - row + 1, columns: Math.max(...cells.map(([, c]) => c)) - column + 1 };
+  }
+
   snapshot(): unknown {
-    const shown = [...this.grid].filter(([, { value, formula, format }]) => value !== '' || formula || format !== 'General');
-    return Object.fromEntries(shown.map(([key, cell]) => [key, { ...cell }]));
+    const shown = [...this.grid].filter(([, { value, formula, format, bold }]) => value !== '' || formula || format !== 'General' || bold).sort(([a], [b]) => (a < b ? -1 : 1));
+    return {
+      cells: Object.fromEntries(shown.map(([key, { bold, ...cell }]) => [key, { ...cell, ...(bold && { bold }) }])),
+      columns: Object.fromEntries([...this.columns].filter(([, { UseStandardWidth: standard }]) => !standard).map(([index, { ColumnWidth: width }]) => [index, width])),
+      marks: this.marks.map(({ box, ...mark }) => JSON.stringify([boxAddress(box), mark])).sort(),
+      notes: Object.fromEntries([...this.Notes.texts].sort(([a], [b]) => (a < b ? -1 : 1))),
+      shapes: this.Shapes.all.map((shape) => ({ ...shape })),
+    };
   }
 }
+
+/** Whether a formula of a sheet's plain data fills a cell. */
+const isFilled = (cells: Sheet['cells'], row: number, column: number): boolean => Object.entries(cells).some(([r, line]) => Object.entries(line).some(([c, { spill }]) =>
+  spill && row >= Number(r) && row < Number(r) + spill.rows && column >= Number(c) && column < Number(c) + spill.columns));
 
 let references = 0;
 
 export class RangeModel extends Served {
   override readonly _ReferenceId = `range-${++references}`;
 
-  constructor(readonly Worksheet: WorksheetModel, private box: Box) {
+  readonly Format: RangeFormatModel;
+  readonly ConditionalFormats: ConditionalFormatsModel;
+
+  constructor(readonly Worksheet: WorksheetModel, readonly box: Box) {
     super();
+    this.Format = new RangeFormatModel(this);
+    this.ConditionalFormats = new ConditionalFormatsModel(this);
   }
 
   get RowIndex(): number {
@@ -248,9 +394,16 @@ export class RangeModel extends Served {
   }
 
   get local(): string {
-    const { row, column, rows, columns } = this.box;
-    const first = `${letters(column)}${row + 1}`;
-    return rows * columns === 1 ? first : `${first}:${letters(column + columns - 1)}${row + rows}`;
+    return boxAddress(this.box);
+  }
+
+  /** Where the range is on its sheet, in points. */
+  get Left(): number {
+    return Array.from({ length: this.box.column }, (_, c) => this.Worksheet.columns.get(c)?.ColumnWidth ?? new ColumnModel().ColumnWidth).reduce((sum, width) => sum + width, 0);
+  }
+
+  get Top(): number {
+    return this.box.row * 15;
   }
 
   get Values(): unknown[][] {
@@ -274,7 +427,7 @@ export class RangeModel extends Served {
 
   /** The program stores cell after cell, and stops at one that it cannot. */
   set Formulas(entries: unknown) {
-    this.change(entries, (cell, input) => typed(input, cell.format));
+    this.change(entries, (cell, input) => ({ bold: cell.bold, ...typed(input, cell.format) }));
   }
 
   get NumberFormat(): string[][] {
@@ -297,6 +450,59 @@ export class RangeModel extends Served {
     return this.Worksheet.fills(`${row},${column}`) ? this : null;
   }
 
+  GetSpillingToRangeOrNullObject(): RangeModel | null {
+    const anchor = `${this.box.row},${this.box.column}`;
+    return this.Worksheet.fills(anchor) ? new RangeModel(this.Worksheet, this.Worksheet.filledBy(anchor)) : null;
+  }
+
+  /** As far as the first blank row and column on every side; what touches at a corner belongs to it. */
+  GetSurroundingRegion(): RangeModel {
+    const box = { ...this.box };
+    const filled = (row: number, column: number, rows: number, columns: number) => row >= 0 && column >= 0
+      && new RangeModel(this.Worksheet, { row, column, rows, columns }).cells(({ value, formula }) => value !== '' || formula !== undefined).flat().some(Boolean);
+    let grown = true;
+    const grow = (side: Partial<Box>) => {
+      Object.assign(box, side);
+      grown = true;
+    };
+    while (grown) {
+      grown = false;
+      const [left, top] = [Math.max(0, box.column - 1), Math.max(0, box.row - 1)];
+      const [wide, high] = [box.column + box.columns + 1 - left, box.row + box.rows + 1 - top];
+      if (filled(box.row - 1, left, 1, wide)) grow({ row: box.row - 1, rows: box.rows + 1 });
+      else if (filled(box.row + box.rows, left, 1, wide)) grow({ rows: box.rows + 1 });
+      else if (filled(top, box.column - 1, high, 1)) grow({ column: box.column - 1, columns: box.columns + 1 });
+      else if (filled(top, box.column + box.columns, high, 1)) grow({ columns: box.columns + 1 });
+    }
+    return new RangeModel(this.Worksheet, box);
+  }
+
+  GetCellProperties(): object[][] {
+    return this.cells(({ bold = false }) => ({ format: { font: { bold } } }));
+  }
+
+  SetCellProperties(properties: { format: { font: { bold: boolean } } }[][]): void {
+    this.restyle(properties.map((row) => row.map(({ format: { font } }) => font)));
+  }
+
+  /** Sets what cells look like, and computes nothing. */
+  restyle(looks: Partial<CellModel>[][]): void {
+    this.refuseIfProtected();
+    this.cells((cell, row, column) => this.Worksheet.put(row, column, { ...cell, ...looks[row - this.box.row]![column - this.box.column] }));
+  }
+
+  refuseIfProtected(): void {
+    if (this.Worksheet.isProtected) throw new ProgramError('AccessDenied', 'You cannot do the requested operation.');
+  }
+
+  Select(): void {
+    this.Worksheet.workbook.select(this);
+  }
+
+  GetColumn(column: number): RangeModel {
+    return new RangeModel(this.Worksheet, { ...this.box, column: this.box.column + column, columns: 1 });
+  }
+
   GetCell(row: number, column: number): RangeModel {
     return new RangeModel(this.Worksheet, cellBox(this.box.row + row, this.box.column + column));
   }
@@ -313,7 +519,8 @@ export class RangeModel extends Served {
 
   private change(inputs: unknown, to: (cell: CellModel, input: unknown) => CellModel): void {
     const sheet = this.Worksheet;
-    if (sheet.isProtected) throw new ProgramError('AccessDenied', 'You cannot do the requested operation.');
+    this.refuseIfProtected();
+    if (sheet.filtered && inside(sheet.filtered, this.box)) throw new ProgramError('FilteredRangeConflict');
     const { row, column, rows, columns } = this.box;
     const lines = inputs as unknown[][];
     if (lines.length !== rows || lines.some((line) => line.length !== columns)) {
@@ -348,21 +555,3 @@ function typed(input: unknown, format: string): CellModel {
   if (/^#(N\/A|VALUE!|REF!|DIV\/0!|NUM!|NAME\?|NULL!)$/.test(input)) return { value: { error: input }, format };
   return { value: input, format };
 }
-
-const cellBox = (row: number, column: number): Box => ({ row, column, rows: 1, columns: 1 });
-
-const place = (key: string): [number, number] => key.split(',').map(Number) as [number, number];
-
-/** Cells, or whole columns or rows; undefined for anything else. */
-function parseAddress(address: string): Box | undefined {
-  const [, a, one, b, two] = /^\$?([A-Z]+)?\$?(\d+)?(?::\$?([A-Z]+)?\$?(\d+)?)?$/i.exec(address) ?? [];
-  const isRange = address.includes(':');
-  if (!(a || one) || (!isRange && !(a && one)) || (isRange && (Boolean(a) !== Boolean(b) || Boolean(one) !== Boolean(two)))) return undefined;
-  const [left, right] = a ? [number(a), number(b ?? a)] : [0, 16_383];
-  const [top, bottom] = one ? [Number(one) - 1, Number(two ?? one) - 1] : [0, 1_048_575];
-  return { row: top, column: left, rows: bottom - top + 1, columns: right - left + 1 };
-}
-
-const number = (column: string): number => [...column.toUpperCase()].reduce((n, letter) => n * 26 + letter.charCodeAt(0) - 64, 0) - 1;
-
-const letters = (column: number): string => (column < 26 ? '' : letters(Math.floor(column / 26) - 1)) + String.fromCharCode(65 + (column % 26));
