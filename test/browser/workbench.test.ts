@@ -55,7 +55,7 @@ async function enter(cell: string, text: string): Promise<void> {
 
 /** Saves, and reads the file that came out. */
 async function saved(): Promise<{ name: string; bytes: Uint8Array; workbook: Workbook }> {
-  const [download] = await Promise.all([page.waitForEvent('download'), page.getByRole('button', { name: 'Save' }).click()]);
+  const [download] = await Promise.all([page.waitForEvent('download'), page.getByRole('button', { name: 'Save', exact: true }).click()]);
   await expectText('#status', /^Saved /);
   const bytes = new Uint8Array(await readFile(await download.path()));
   return { name: download.suggestedFilename(), bytes, workbook: (await readWorkbook(bytes)).workbook };
@@ -239,7 +239,7 @@ describe('files in the workbench', () => {
     await goTo('A6');
     await page.keyboard.press('F2');
     await page.keyboard.press('Escape');
-    await page.getByRole('tab', { name: 'Plan' }).click();
+    await page.locator('#sheet').getByRole('tab', { name: 'Plan' }).click();
     expect(await page.locator('#file-name').textContent()).toBe('Gannet Ness.xlsx');
     await enter('B4', '0.5');
     await expectText('#file-name', 'changed');
@@ -271,7 +271,7 @@ describe('the workbench for everyone', () => {
   it('has named landmarks and controls', async () => {
     const names = await page.evaluate(() => [...document.querySelectorAll('header, main, aside#pane, button, input, a, [contenteditable]')]
       .filter((element) => element.checkVisibility())
-      .filter((element) => element.tagName !== 'HEADER' && !(element.getAttribute('aria-label') ?? element.textContent ?? '').trim())
+      .filter((element) => element.tagName !== 'HEADER' && !(element.getAttribute('aria-label') ?? (element as HTMLInputElement).labels?.[0]?.textContent ?? element.textContent ?? '').trim())
       .map((element) => element.outerHTML.slice(0, 120)));
     expect(names).toEqual([]);
   });
