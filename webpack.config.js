@@ -158,7 +158,17 @@ export default async (env) => {
     plugins: [new webpack.DefinePlugin({ FOLDPLAN_VERSION: JSON.stringify(version) })],
   });
 
-  if (env.bench) return [functions, program('bench', 'test/bench/run.ts')];
+  /** The page in which the benchmark measures the pictures. */
+  const benchPage = {
+    ...common('bench-page', mode),
+    target: site.target,
+    entry: { 'bench-pictures': at('test/bench/pictures-page.ts') },
+    output: { path: at('dist-cli'), filename: '[name].js' },
+    module: site.module,
+    plugins: [new MiniCssExtractPlugin()],
+  };
+
+  if (env.bench) return [functions, program('bench', 'test/bench/run.ts'), benchPage];
   if (env.WEBPACK_SERVE) {
     process.env.WEBPACK_DEV_SERVER_BASE_PORT ??= '3000';
     return [site, functions].map((config) => ({ ...config, stats: 'errors-warnings', infrastructureLogging: { level: 'error' } }));

@@ -20,16 +20,19 @@ export function headlineSection({ outcome, verdict, facts, objections, remarks }
       : []));
 }
 
-/** The facts of the picture as a table. Its cells name their column, for panes too narrow to hold the columns side by side. */
-export function tableSection({ plan, rows }: PlanFigures): Tree {
+/**
+ * The facts of the picture as a table. Its cells name their column, for panes too narrow to hold the columns side by side.
+ * @param opened a table that nobody has opened needs no cells
+ */
+export function tableSection({ plan, rows }: PlanFigures, opened: boolean): Tree {
   const caption = plan.rate === null ? sentences.tableCaptionWithoutRate : sentences.tableCaption(exactFigure(plan.rate));
   return element('details', { class: 'figures', 'data-keep': 'figures' },
     element('summary', {}, sentences.tableSummary(rows.length)),
-    element('table', { role: 'table' },
+    ...(opened ? [element('table', { role: 'table' },
       element('caption', {}, caption),
       element('thead', { role: 'rowgroup' }, element('tr', { role: 'row' },
         ...sentences.columns.map((title) => element('th', { role: 'columnheader', scope: 'col' }, title)))),
-      element('tbody', { role: 'rowgroup' }, ...rows.map(tableRow))));
+      element('tbody', { role: 'rowgroup' }, ...rows.map(tableRow)))] : []));
 }
 
 function tableRow({ row, number, band, problem }: RowFigures): Tree {

@@ -6,7 +6,7 @@ const segmenter = new Intl.Segmenter('en', { granularity: 'grapheme' });
 /** Width in pixels of a text in a sans-serif font of this size. */
 export function textWidth(text: string, size: number): number {
   let ems = 0;
-  for (const { segment } of segmenter.segment(text)) ems += advance(segment);
+  for (const grapheme of graphemes(text)) ems += advance(grapheme);
   return ems * size;
 }
 
@@ -16,16 +16,22 @@ export function fitText(text: string, size: number, most: number): string {
   const room = most - textWidth('…', size);
   let kept = '';
   let used = 0;
-  for (const { segment } of segmenter.segment(text)) {
-    used += advance(segment) * size;
+  for (const grapheme of graphemes(text)) {
+    used += advance(grapheme) * size;
     if (used > room) break;
-    kept += segment;
+    kept += grapheme;
   }
   return kept === '' ? '' : `${kept.trimEnd()}…`;
 }
 
+/** What a reader takes for one character each. Most texts are plain ones, for which no segmenter is needed. */
+const graphemes = (text: string): Iterable<string> => (PLAIN.test(text) ? text : Array.from(segmenter.segment(text), ({ segment }) => segment));
+
+const PLAIN = /^[ -~]*$/;
+
 /** Width of one grapheme in ems. */
 function advance(grapheme: string): number {
+  if (grapheme.length === 1 && PLAIN.test(grapheme)) return BY_CHARACTER.get(grapheme) ?? (UPPER.test(grapheme) ? 0.78 : 0.66);
   if (INVISIBLE.test(grapheme)) return 0;
   if (PICTURE.test(grapheme)) return 1.4;
   if (WIDE.test(grapheme)) return 1.05;

@@ -15,22 +15,31 @@ export interface Headline {
   remarks: string[];
 }
 
+/** The rate in one sentence, for a plan whose rate is known. */
+export const verdictOf = (figures: PlanFigures): string =>
+  ({ open: sentences.nothingWanted, fails: sentences.fails, narrowly: sentences.worksNarrowly, works: sentences.works }[outcomeOf(figures)](exactFigure(figures.plan.rate!)));
+
+function outcomeOf({ bands, pairs }: PlanFigures): Headline['outcome'] {
+  const states = bands.filter(({ row }) => row.role === 'wanted').map(({ state }) => state);
+  if (states.length === 0) return 'open';
+  if (pairs.some(({ gap }) => gap < 0) || states.some((state) => state === 'crosses' || state === 'too wide')) return 'fails';
+  return pairs.length > 0 || states.includes('tight') ? 'narrowly' : 'works';
+}
+
 /** For a plan whose rate is known. */
 export function headline(figures: PlanFigures): Headline {
   const { plan, rows, bands, pairs } = figures;
   const wanted = bands.filter(({ row }) => row.role === 'wanted');
   const count = (...states: BandFigures['state'][]) => wanted.filter(({ state }) => states.includes(state)).length;
   const overlaps = pairs.filter(({ gap }) => gap < 0).length;
-  const outcome = wanted.length === 0 ? 'open'
-    : overlaps > 0 || count('crosses', 'too wide') > 0 ? 'fails'
-    : pairs.length > 0 || count('tight') > 0 ? 'narrowly' : 'works';
+  const outcome = outcomeOf(figures);
   const rate = exactFigure(plan.rate!);
   const smallest = wanted.reduce<BandFigures | null>((least, band) => (least === null || band.margin < least.margin ? band : least), null);
   const unread = rows.length - bands.length;
   const { facts } = sentences;
   return {
     outcome,
-    verdict: { open: sentences.nothingWanted, fails: sentences.fails, narrowly: sentences.worksNarrowly, works: sentences.works }[outcome](rate),
+    verdict: verdictOf(figures),
     facts: [
       { what: facts.rate, figure: rate },
       { what: facts.allowance, figure: sentences.allowance(exactFigure(plan.guard), exactFigure(plan.ppm)) },

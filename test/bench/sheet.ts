@@ -40,11 +40,11 @@ const folded = (frequency: string) => `ABS(${frequency}-${RATE}*ROUND(${frequenc
 
 /** @throws Error where the notations give different results */
 export async function benchSheet(seed: number, functions: WorksheetFunctions): Promise<Row[]> {
-  const bands = randomBands(seed);
+  const bands = randomBands(seed, ROWS, 10_000);
   const native = 'native formulas';
   const plans: Record<string, SheetHost> = {};
   for (const [name, columns] of Object.entries({
-    [native]: perRow((column) => column.native), 'FOLD formulas': perRow((column) => column.fold), 'spilled FOLD columns': spilled(),
+    [native]: perRow((column) => column.native), 'FOLD formulas': perRow((column) => column.fold), 'spilled FOLD columns': spilled(ROWS),
   })) {
     plans[name] = openHeadless(functions);
     await plans[name].load(workbook(bands, columns));
@@ -65,7 +65,7 @@ export async function benchSheet(seed: number, functions: WorksheetFunctions): P
 }
 
 /** From the moment the sheet begins to recalculate until the results stand in the cells; it waits a fixed time before it begins. */
-async function recalculation(host: SheetHost, rate: number): Promise<number> {
+export async function recalculation(host: SheetHost, rate: number): Promise<number> {
   const session = host.univer.__getInjector().get(FormulaCalculationSessionService);
   const before = session.state.id;
   let [start, end] = [0, 0];
@@ -90,11 +90,12 @@ async function expectSame(one: SheetHost, other: SheetHost, name: string): Promi
   if (differs >= 0) throw new Error(`${name} give ${JSON.stringify(given[differs])}, not ${JSON.stringify(expected[differs])}, in result ${differs}.`);
 }
 
-function randomBands(seed: number): [low: number, high: number][] {
+/** @param widest in thousandths */
+export function randomBands(seed: number, count: number, widest: number): [low: number, high: number][] {
   const random = seeded(seed);
-  return Array.from({ length: ROWS }, () => {
+  return Array.from({ length: count }, () => {
     const low = random.whole(1, 2_000_000) / 1000;
-    return [low, Number((low + random.whole(1, 10_000) / 1000).toFixed(3))];
+    return [low, Number((low + random.whole(1, widest) / 1000).toFixed(3))];
   });
 }
 
@@ -103,12 +104,12 @@ type Formulas = Record<number, string[]>;
 const perRow = (notation: (column: (typeof COLUMNS)[number]) => (low: string, high: string) => string): Formulas =>
   Object.fromEntries(Array.from({ length: ROWS }, (_, i) => [FIRST + i, COLUMNS.map((column) => notation(column)(`A${FIRST + i}`, `B${FIRST + i}`))]));
 
-const spilled = (): Formulas => {
-  const rows = (letter: string) => `${letter}${FIRST}:${letter}${FIRST + ROWS - 1}`;
+export const spilled = (count: number): Formulas => {
+  const rows = (letter: string) => `${letter}${FIRST}:${letter}${FIRST + count - 1}`;
   return { [FIRST]: COLUMNS.map(({ fold }) => fold(rows('A'), rows('B'))) };
 };
 
-function workbook(bands: [number, number][], formulas: Formulas): Workbook {
+export function workbook(bands: [number, number][], formulas: Formulas): Workbook {
   const line = (...cells: Cell[]) => Object.fromEntries(cells.map((cell, i) => [i, cell]));
   const cells: Sheet['cells'] = {
     0: line({ value: 'rate' }, { value: 122.88 }),

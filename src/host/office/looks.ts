@@ -11,8 +11,8 @@ export interface LookState {
   numberFormat?: string[][];
   bold?: boolean[][];
   widths?: { points: number; standard: boolean }[];
-  /** Marks of ours on exactly these cells, and the ids of all conditional formats that touch them. */
-  marks?: { own: string[]; all: string[] };
+  /** Ids of our marks on exactly these cells, of marks there that were begun and not finished, and of all conditional formats that touch them. */
+  marks?: { own: string[]; unfinished: string[]; all: string[] };
 }
 
 export interface Wanted {
@@ -49,14 +49,16 @@ export async function readLooks(context: Excel.RequestContext, wanted: Wanted[])
   if (rules.some((found) => found.length > 0)) await context.sync();
   return asked.map(({ range, weights, columns, rules: found }, i) => {
     const { spot, look } = wanted[i]!;
-    const isOurs = ({ rule, font, fill, place }: (typeof rules)[number][number]) => !place.isNullObject && withoutSheet(place.address) === spot.address
-      && rule.rule.operator === 'LessThan' && /^=?0$/.test(rule.rule.formula1) && sameColor(font.color, NEGATIVE.color) && sameColor(fill.color, NEGATIVE.fill);
+    const here = rules[i]!.filter(({ place }) => !place.isNullObject && withoutSheet(place.address) === spot.address);
+    const own = here.filter(({ rule: { rule }, font, fill }) => rule.operator === 'LessThan' && /^=?0$/.test(rule.formula1)
+      && sameColor(font.color, NEGATIVE.color) && sameColor(fill.color, NEGATIVE.fill));
+    const unfinished = here.filter(({ rule: { rule } }) => !rule?.formula1); // the rule is set last
     return {
       spot,
       ...(look.numberFormat !== undefined && { numberFormat: range.numberFormat as string[][] }),
       ...(weights && { bold: weights.value.map((row) => row.map(({ format }) => format!.font!.bold!)) }),
       ...(columns.length > 0 && { widths: columns.map(({ columnWidth, useStandardWidth }) => ({ points: columnWidth, standard: useStandardWidth })) }),
-      ...(found && { marks: { own: rules[i]!.filter(isOurs).map(({ id }) => id), all: found.items.map(({ id }) => id) } }),
+      ...(found && { marks: { own: idsOf(own), unfinished: idsOf(unfinished), all: idsOf(found.items) } }),
     };
   });
 }
@@ -91,7 +93,7 @@ export const takeBackLooks = (before: LookState[]): TakeBack => async (context) 
       if (standard) format.useStandardWidth = true;
       else format.columnWidth = points;
     }
-    for (const id of now[i]!.marks?.own ?? []) {
+    for (const id of [...now[i]!.marks?.own ?? [], ...now[i]!.marks?.unfinished ?? []]) {
       if (!marks!.all.includes(id) && !handled.has(id)) range.conditionalFormats.getItem(id).delete();
       handled.add(id);
     }
@@ -115,6 +117,8 @@ function addMark(range: Excel.Range): void {
   cellValue.format.fill.color = NEGATIVE.fill;
   cellValue.rule = { formula1: '0', operator: 'LessThan' };
 }
+
+const idsOf = (items: { id: string }[]): string[] => items.map(({ id }) => id);
 
 const sameColor = (one: string | null, other: string): boolean => one?.toLowerCase() === other;
 

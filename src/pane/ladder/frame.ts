@@ -154,11 +154,10 @@ export function pack(bars: BandBar[], { left, right }: Frame, named: number, num
     { most: numbered, pitch: 13, size: SMALL, apart: 6, call: ({ band }: BandBar) => ({ text: sentences.numbered(band.number), suffix: '' }) },
   ];
   for (const { most, pitch, size, apart, call } of attempts) {
-    const placed = placeInTracks(bars.map((bar) => ({ from: bar.from, to: bar.to, ...call(bar) })), left, right, size, apart);
-    const count = tracksOf(placed);
-    if (count <= most) return { placed, count, pitch, height: pitch - 4, size };
+    const placed = most > 0 ? placeInTracks(bars.map((bar) => ({ from: bar.from, to: bar.to, ...call(bar) })), left, right, size, apart, most) : null;
+    if (placed) return { placed, count: tracksOf(placed), pitch, height: pitch - 4, size };
   }
-  const placed = placeInTracks(bars.map(({ from, to }) => ({ from, to, text: '', suffix: '' })), left, right, 0, 1);
+  const placed = placeInTracks(bars.map(({ from, to }) => ({ from, to, text: '', suffix: '' })), left, right, 0, 1)!;
   const count = tracksOf(placed);
   const pitch = Math.min(5, Math.max(1.5, 120 / count));
   return { placed, count, pitch, height: pitch * 0.8, size: 0 };

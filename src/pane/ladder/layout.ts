@@ -60,7 +60,8 @@ export function ladderLayout(figures: PlanFigures, width: number, view: LadderVi
   const shown: Stretch = { low: view.from * half, high: view.to === 1 ? half : view.to * half };
   const bands = figures.bands.filter(({ row, sections }) => (view.role === 'all' || row.role === view.role) && sections.some((one) => inView(shown, one)));
   if (bands.length === 0) return null;
-  const pairs = figures.pairs.filter((pair) => bands.includes(pair.first) && bands.includes(pair.second));
+  const drawn = new Set(bands);
+  const pairs = figures.pairs.filter((pair) => drawn.has(pair.first) && drawn.has(pair.second));
   const zones = drawnZones(bands, shown);
   const frame = frameOf(zones, plan.rate!, shown, Math.max(width, NARROWEST));
   const top = 44;

@@ -35,6 +35,9 @@ export function layOutput(bands: BandFigures[], pairs: Pair[], frame: Frame, top
   let y = top + 18;
 
   const stretches = sharedStretches(bands, pairs).filter((one) => inView(frame, one));
+  const shared = new Map<BandFigures, Shared[]>();
+  for (const band of bands) shared.set(band, []);
+  for (const one of stretches) for (const band of one.bands) shared.get(band)!.push(one);
   const regions = union(stretches);
   const bracket = y + 16;
   if (regions.length > 0) {
@@ -52,7 +55,7 @@ export function layOutput(bands: BandFigures[], pairs: Pair[], frame: Frame, top
     return {
       shape: { x: from, width: to - from, y: middle, height: packed.height, tall },
       label: label && { ...label, y: middle, size: packed.size },
-      marks: union(stretches.filter((one) => one.bands.includes(band))).map((shared) => inPixels(frame, shared.low, shared.high)),
+      marks: union(shared.get(band)!).map((one) => inPixels(frame, one.low, one.high)),
     };
   });
 

@@ -8,7 +8,7 @@ import { sentences } from '../pictures/sentences';
 import { type Picture, takeOut } from '../pictures/take-out';
 import type { Surroundings } from '../section';
 import { slot } from '../slot';
-import { headline } from '../words';
+import { headline, verdictOf } from '../words';
 import { place as placeOf } from './frame';
 import { type LadderLayout, ladderLayout } from './layout';
 import { ladderPicture } from './picture';
@@ -67,7 +67,7 @@ export function ladderPanel(surroundings: Surroundings, pick: (row: number) => v
     const write = figureWriter(half);
     const [from, to] = [write(view.from * half, 5), write(view.to * half, 5)];
     drawn = ladderLayout(figures, width, view);
-    picture.show([drawn ? ladderPicture(drawn, headline(figures).verdict) : element('p', { class: 'problem' }, sentences.nothingInView(from, to, view.role))]);
+    picture.show([drawn ? ladderPicture(drawn, verdictOf(figures)) : element('p', { class: 'problem' }, sentences.nothingInView(from, to, view.role))]);
     stepping.renew();
     const all = view.from === 0 && view.to === 1;
     const words = all ? '' : sentences.axis(from, to);

@@ -31,23 +31,24 @@ const BESIDE = 5;
 
 /**
  * Places bars between left and right, each in the lowest track where neither it nor its label touches another. A label stands
- * inside its bar where it has room there, else to the right of it, else to the left.
+ * inside its bar where it has room there, else to the right of it, else to the left. null where that takes more than `most` tracks.
  * @param size of the labels' font
  * @param apart least space between one bar with its label and the next one
  */
-export function placeInTracks(bars: Bar[], left: number, right: number, size: number, apart: number): PlacedBar[] {
+export function placeInTracks(bars: Bar[], left: number, right: number, size: number, apart: number, most = Infinity): PlacedBar[] | null {
   const placed: PlacedBar[] = new Array(bars.length);
   const tracks: Extent[][] = [];
   const order = bars.map((_, i) => i).sort((i, j) => bars[i]!.from - bars[j]!.from || bars[j]!.to - bars[i]!.to || i - j);
   for (const i of order) {
     const bar = bars[i]!;
-    const choices = labelChoices(bar, left, right, size);
+    const choices = labelChoices(bar, left, right, size).map((label) => ({ label, extent: extent(bar, label) }));
     for (let track = 0; placed[i] === undefined; track++) {
+      if (track >= most) return null;
       const taken = (tracks[track] ??= []);
-      const label = choices.find((choice) => isFree(taken, extent(bar, choice), apart));
-      if (label === undefined) continue;
-      taken.push(extent(bar, label));
-      placed[i] = { track, label };
+      const choice = choices.find((one) => isFree(taken, one.extent, apart));
+      if (choice === undefined) continue;
+      taken.push(choice.extent);
+      placed[i] = { track, label: choice.label };
     }
   }
   return placed;
@@ -58,8 +59,9 @@ interface Extent {
   to: number;
 }
 
+/** What is in the way was mostly placed last. */
 const isFree = (taken: Extent[], { from, to }: Extent, apart: number): boolean =>
-  taken.every((other) => to + apart <= other.from || other.to + apart <= from);
+  taken.findLast((other) => to + apart > other.from && other.to + apart > from) === undefined;
 
 function extent({ from, to }: Bar, label: PlacedLabel | null): Extent {
   if (!label) return { from, to };

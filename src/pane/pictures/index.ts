@@ -28,6 +28,9 @@ export const picturesSection: MakeSection = (surroundings) => {
     const reference = figures && rowReference(figures.plan, row);
     if (reference) void attempt(() => host.select(reference));
   };
+  const isOpen = () => rows.place.querySelector('details')?.open ?? false;
+  const showRows = () => rows.show(figures && figures.rows.length > 0 ? [tableSection(figures, isOpen())] : []);
+  rows.place.addEventListener('toggle', showRows, { capture: true });
   conflicts.place.addEventListener('click', (event) => {
     const row = (event.target as Element).closest('[data-row]')?.getAttribute('data-row');
     if (row) pick(Number(row));
@@ -57,7 +60,7 @@ export const picturesSection: MakeSection = (surroundings) => {
       resize();
       ladder.show(able, selected);
       ruler.show(able);
-      rows.show(now.rows.length > 0 ? [tableSection(now)] : []);
+      showRows();
     },
     close() {
       sizes.disconnect();

@@ -252,10 +252,10 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
 
   let lanesFor: { found: ForbiddenRates; rate: number; lanes: Lanes } | null = null;
   /** They follow the candidate once it rests: lanes that change places under a drag can't be read. */
-  function lanes(): Lanes | null {
+  function lanes(rests: boolean): Lanes | null {
     const { value } = findings;
     if (!value?.found) return null;
-    if (lanesFor?.found !== value.found || (thenStanding.fresh && lanesFor.rate !== candidate())) {
+    if (lanesFor?.found !== value.found || (rests && lanesFor.rate !== candidate())) {
       lanesFor = { found: value.found, rate: candidate(), lanes: lanesOf(value.found, value.window, candidate(), LANES) };
     }
     return lanesFor.lanes;
@@ -270,14 +270,16 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
     const [looked, rate] = [window(), candidate()];
     findings.ask(`${key}${looked.from},${looked.to}`, () => findingsIn(plan, looked));
     nowStanding.ask(`${key}${now()}`, () => standingOf(plan, now()));
-    thenStanding.ask(`${key}${rate}`, () => standingOf(plan, rate));
+    if (chosen !== null) thenStanding.ask(`${key}${rate}`, () => standingOf(plan, rate));
 
-    const input = rulerInput();
+    const nowKnown = nowStanding.fresh ? nowStanding.value : null;
+    const thenKnown = chosen === null ? nowKnown : thenStanding.fresh ? thenStanding.value : null;
+    const input = rulerInput(thenKnown !== null);
     layout = rulerLayout(input, width);
     picture.show([rulerPicture(layout, now(), rangesWords())]);
     stage.classList.toggle('computing', !findings.fresh);
     const usableHere = rangeOf(rate, ranges());
-    handle.show(layout.candidate, looked, rate, thenStanding.fresh && thenStanding.value ? standingWords(thenStanding.value) : exactFigure(rate));
+    handle.show(layout.candidate, looked, rate, thenKnown ? standingWords(thenKnown) : exactFigure(rate));
 
     fields.from.show(exactFigure(looked.from));
     fields.to.show(exactFigure(looked.to));
@@ -286,8 +288,6 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
     fields.harmonics.show(String(settings.harmonics));
     fields.cores.show(String(settings.cores));
 
-    const nowKnown = nowStanding.fresh ? nowStanding.value : null;
-    const thenKnown = thenStanding.fresh ? thenStanding.value : null;
     stands(now(), plan, nowKnown);
     showStandings(thenKnown);
     showPreview(nowKnown, thenKnown);
@@ -305,8 +305,8 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
     out.able(findings.value !== null);
   }
 
-  function rulerInput(): RulerInput {
-    return { window: window(), now: now(), candidate: candidate(), ranges: findings.value?.ranges ?? null, lanes: lanes(), rules: rules! };
+  function rulerInput(rests: boolean): RulerInput {
+    return { window: window(), now: now(), candidate: candidate(), ranges: findings.value?.ranges ?? null, lanes: lanes(rests), rules: rules! };
   }
 
   const rangesWords = () => findings.value?.problem ?? (findings.value ? ruler.rangeCount(ranges().length) : sentences.computing);
@@ -348,7 +348,7 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
     const looked = window();
     const rates = roomiest(ranges(), grid(), 3).map(({ rate }) => exactFigure(rate));
     return {
-      tree: rulerPicture(rulerLayout(rulerInput(), TAKEN_OUT), now(), rangesWords()),
+      tree: rulerPicture(rulerLayout(rulerInput(true), TAKEN_OUT), now(), rangesWords()),
       facts: sentences.rulerFacts(exactFigure(looked.from), exactFigure(looked.to), rangesWords(), exactFigure(now()), rates),
       fileName: sentences.fileName.ruler(exactFigure(now())),
     };

@@ -1,11 +1,10 @@
 import { describe, expect, it } from 'vitest';
 import { OfficeHost } from '../../../src/host/office/office-host';
-import { type CellInput, type CellValue, type Workbook, HostFault } from '../../../src/host/port';
-import { FunctionError, callFunction } from '../../../src/host/sheet/functions-runtime';
-import { built } from '../../support/built-functions';
+import { type CellInput, type Workbook, HostFault } from '../../../src/host/port';
+import { evaluate } from '../../support/evaluate';
 import { contractWorkbook, testHost, testLiveHost } from '../../support/host-contract';
 import { connect } from '../../support/played-excel/client-library';
-import { type Evaluate, WorkbookModel } from '../../support/played-excel/workbook-model';
+import { WorkbookModel } from '../../support/played-excel/workbook-model';
 
 testHost('the spreadsheet program', async (workbook) => ({ ...open(workbook), close: async () => {} }));
 
@@ -217,13 +216,4 @@ function open(workbook: Workbook) {
 function planWith(cells: Workbook['sheets'][number]['cells']): Workbook {
   const [plan, other] = contractWorkbook.sheets;
   return { sheets: [{ ...plan!, cells }, { ...other!, cells: { 0: { 0: { value: 100 } } } }], names: { Rate: "'Clock''s tree'!$A$1" } };
-}
-
-const cell = (value: unknown): CellValue => (value instanceof FunctionError ? { error: value.code } : (value as CellValue));
-
-/** FOLD formulas of the model compute by the built functions. */
-function evaluate(...[name, args]: Parameters<Evaluate>): CellValue[][] {
-  const given = args.map((rows) => rows && rows.map((row) => row.map((one) => (typeof one === 'object' && one ? { code: one.error } : one))));
-  const { parameters } = built.metadata.find(({ id }) => id === name)!;
-  return callFunction(built.implementations.get(name)!, parameters, given).map((row) => row.map(cell));
 }

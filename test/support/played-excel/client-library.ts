@@ -15,6 +15,8 @@ export interface Connection {
   failAt(step: number, code: string): void;
   /** Whether that failure has happened. */
   hasFailed(): boolean;
+  /** How many requests the program has got. */
+  requests(): number;
   /** How the add-in was asked to start with the workbook; undefined where it was not asked. */
   startup(): string | undefined;
   /** Lets every event reach its listeners. */
@@ -38,6 +40,7 @@ export function connect(workbook: WorkbookModel, version = 1.18): Connection {
   const root: Root = { workbook, made: {}, kept: new Map() };
   let failure: { step: number; code: string } | null = null;
   let failed = false;
+  let requests = 0;
   const nextStep = (codes: (code: string) => boolean) => {
     if (!failure || !codes(failure.code) || failure.step-- > 0) return;
     const { code } = failure;
@@ -59,6 +62,7 @@ export function connect(workbook: WorkbookModel, version = 1.18): Connection {
     _createRequestExecutorOrNull(): object {
       return {
         async executeAsync(_data: unknown, _flags: number, message: { Body: Batch }) {
+          requests++;
           try {
             nextStep(isLoss);
           } catch (error) {
@@ -84,6 +88,7 @@ export function connect(workbook: WorkbookModel, version = 1.18): Connection {
       failed = false;
     },
     hasFailed: () => failed,
+    requests: () => requests,
     startup: () => startup,
     settle: () => new Promise((settled) => setTimeout(settled)),
   };

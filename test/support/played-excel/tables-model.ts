@@ -93,9 +93,10 @@ class TableColumnModel extends Served {
   Delete(): void {
     const { box, Worksheet: sheet } = this.table.range;
     if (this.index !== box.columns - 1) throw new ProgramError('NotImplemented', 'The model of the workbook moves no cells.');
-    const cells = this.GetRange();
-    cells.NumberFormat = cells.cells(() => 'General');
-    cells.Formulas = cells.cells(() => '');
+    const column = this.GetRange();
+    column.refuseIfProtected();
+    column.cells((_, row, at) => sheet.put(row, at, { value: '', format: 'General' }));
+    sheet.workbook.edited(sheet, column.local);
     this.table.range = new RangeModel(sheet, { ...box, columns: box.columns - 1 });
   }
 }
