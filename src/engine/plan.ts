@@ -5,6 +5,7 @@ import { inPpm, readGuard, readRate, readTolerance } from './band';
 import { type FreeRange, carve } from './carve';
 import { checkCount, checkListing } from './counts';
 import { faults, shown } from './fault';
+import { GLANCE_DOUBT, certainlyHolds, roomAtAGlance } from './glance';
 import { centre } from './interval';
 import {
   ONE, type Rational, ZERO, absolute, add, ceiling, compare, divide, floor, fromNumber, greatest, half, least, multiply, rational, roundDown, roundUp, subtract,
@@ -117,6 +118,7 @@ export function conflicts(plan: Plan, rate: number, ppm = 0): Conflict[] {
   const guard = readGuard(plan.guard);
   const worst = new Map<string, Standing>();
   for (const rule of rulesOf(plan)) {
+    if (certainlyHolds(rule, rate, ppm / 1e6)) continue;
     const standing = standingAt(rule, fs, tolerance, guard);
     if (standing.slack.n >= 0n) continue;
     // Difference and sum of two bands are one thing to a person.
@@ -134,7 +136,11 @@ export function conflicts(plan: Plan, rate: number, ppm = 0): Conflict[] {
  */
 export function headroom(plan: Plan, rate: number): number {
   const fs = readRate(rate);
-  return roundDown(inPpm(rulesOf(plan).map((rule) => roomOf(rule, fs)).reduce(least, ONE)));
+  const rules = rulesOf(plan);
+  const glances = rules.map((rule) => roomAtAGlance(rule, rate));
+  const narrowest = glances.reduce<number>((x, y) => (y === null ? x : Math.min(x, y)), 1) + GLANCE_DOUBT;
+  const decisive = rules.filter((_, i) => glances[i]! <= narrowest); // those that doubles can't tell included: null counts as 0
+  return roundDown(inPpm(decisive.map((rule) => roomOf(rule, fs)).reduce(least, ONE)));
 }
 
 /** A plan's rules, or the fault of a band that no rate can help. */
