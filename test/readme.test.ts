@@ -121,6 +121,19 @@ describe('the commands of the documents', () => {
   });
 });
 
+describe('the plain copy of the README', () => {
+  it('holds no formula of ours', async () => {
+    const [, line] = readme.match(/^npm run recalc -- (plan\.xlsx --plain .*)$/m)!;
+    const folder = mkdtempSync(path.join(tmpdir(), 'foldplan-'));
+    writeFileSync(path.join(folder, 'plan.xlsx'), await writeWorkbook(coastPlan()));
+    execFileSync(process.execPath, [path.join(root, 'dist-cli/recalc.cjs'), ...line!.split(' ')], { cwd: folder, stdio: 'pipe' });
+    const { workbook } = await readWorkbook(readFileSync(path.join(folder, 'plain.xlsx')));
+    const formulas = workbook.sheets.flatMap(({ cells }) => Object.values(cells).flatMap((row) => Object.values(row).flatMap(({ formula }) => formula ?? [])));
+    expect(formulas.length).toBeGreaterThan(10);
+    expect(formulas.filter((formula) => formula.includes('FOLD.'))).toEqual([]);
+  });
+});
+
 describe('the links of the documents', () => {
   it.each(['README.md', 'DEVELOPERS.md'])('of %s lead somewhere', (file) => {
     const targets = [...read(file).matchAll(/\]\(([^)#]+)\)/g)].map(([, target]) => target!).filter((target) => !target.startsWith('http'));

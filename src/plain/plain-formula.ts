@@ -79,6 +79,7 @@ class Conversion {
   /** Whether nothing in the formula can be more than one value. */
   readonly #scalar: boolean;
   readonly #hasOurs: boolean;
+  readonly #areas = new Map<string, SheetArea | null>();
   /** The cell of the block that is being written. */
   #row = 0;
   #column = 0;
@@ -253,11 +254,12 @@ class Conversion {
 
   /** The cells that a reference means; those of other workbooks by their address alone. */
   #areaOf(reference: string): SheetArea | null {
-    const found = this.surroundings.areaOf(reference);
-    if (found) return found;
-    const parsed = parseA1Ref(reference);
-    const area = parsed && 'range' in parsed ? parseArea(reference.slice(reference.lastIndexOf('!') + 1)) : null;
-    return area && { sheet: reference.slice(0, reference.lastIndexOf('!')), area };
+    let area = this.#areas.get(reference);
+    if (area === undefined) {
+      area = this.surroundings.areaOf(reference) ?? outside(reference);
+      this.#areas.set(reference, area);
+    }
+    return area;
   }
 
   /** Whether a node by itself may be more than one value. */
@@ -280,6 +282,13 @@ class Conversion {
     if (givesArray(name)) return true;
     return argumentsOf(call).some((nodes, place) => !takesRange(name, place) && some(nodes, (node) => this.#isSeveral(node)));
   }
+}
+
+/** The cells of an address whose sheet is not in this workbook. */
+function outside(reference: string): SheetArea | null {
+  const parsed = parseA1Ref(reference);
+  const area = parsed && 'range' in parsed ? parseArea(reference.slice(reference.lastIndexOf('!') + 1)) : null;
+  return area && { sheet: reference.slice(0, reference.lastIndexOf('!')), area };
 }
 
 const RANDOM = ['RAND', 'RANDBETWEEN', 'RANDARRAY'];
