@@ -1,12 +1,14 @@
 // What a workbook file holds that plain data has no place for.
 
 import { type Book, isBuiltIn } from './book';
+import { isMark, markFormats } from './marks';
 import type { SheetPart } from './sheet-part';
 import { type XmlElement, child, childrenOf, isOn } from './xml';
 
 /** Words for it, in a fixed order. */
 export async function notKept(book: Book): Promise<string[]> {
-  const found = new Set([...await inParts(book), ...inWorkbook(book), ...book.sheets.flatMap((sheet) => [...inSheet(sheet), ...inCells(sheet)])]);
+  const marks = await markFormats(book);
+  const found = new Set([...await inParts(book), ...inWorkbook(book), ...book.sheets.flatMap((sheet) => [...inSheet(sheet, marks), ...inCells(sheet)])]);
   return ORDER.filter((words) => found.has(words));
 }
 
@@ -25,12 +27,12 @@ const PARTS: Record<string, Words> = {
   vbaProject: 'macros', chart: 'charts', chartEx: 'charts', chartsheet: 'chart sheets', dialogsheet: 'chart sheets', image: 'pictures', oleObject: 'embedded objects',
   package: 'embedded objects', control: 'form controls', ctrlProp: 'form controls', pivotTable: 'pivot tables', slicer: 'slicers', timeline: 'slicers',
   table: 'tables (formulas name their cells instead)', externalLink: 'links to other workbooks (their last values stay)', connections: 'data connections',
-  queryTable: 'data connections', comments: 'comments', threadedComment: 'comments', hyperlink: 'hyperlinks',
+  queryTable: 'data connections', threadedComment: 'comments', hyperlink: 'hyperlinks',
 };
 
 /** By the name of an element of a sheet. */
 const ELEMENTS: Record<string, Words> = {
-  conditionalFormatting: 'conditional formats', dataValidations: 'data validation', autoFilter: 'filters', hyperlinks: 'hyperlinks', sheetProtection: 'protection',
+  dataValidations: 'data validation', autoFilter: 'filters', hyperlinks: 'hyperlinks', sheetProtection: 'protection',
   headerFooter: 'headers and footers', oleObjects: 'embedded objects', controls: 'form controls',
 };
 
@@ -63,13 +65,14 @@ function inWorkbook(book: Book): Words[] {
   ];
 }
 
-function inSheet({ root, rows }: SheetPart): Words[] {
+function inSheet({ root, rows }: SheetPart, marks: ReadonlySet<number>): Words[] {
   const extensions = childrenOf(child(root, 'extLst'), 'ext').flatMap(({ children }) => children.map(({ name }) => EXTENSIONS[name.slice(name.indexOf(':') + 1)]));
   const columns = childrenOf(child(root, 'cols'), 'col').map(({ attributes }) => attributes);
   const lines = [...columns, ...rows.map(({ attributes }) => attributes)];
   return [
     ...root.children.map(({ name }) => ELEMENTS[name]),
     ...extensions,
+    childrenOf(root, 'conditionalFormatting').some((element) => !isMark(element, marks)) ? 'conditional formats' as const : undefined,
     lines.some(({ outlineLevel = '0' }) => outlineLevel !== '0') ? 'groups of rows and columns' as const : undefined,
     columns.some(({ style = '0' }) => style !== '0') || rows.some(({ attributes: { s = '0', customFormat } }) => s !== '0' && isOn(customFormat, false))
       ? 'formats of whole rows and columns' as const : undefined,

@@ -4,7 +4,9 @@ import type { Cell, Sheet, Style, Workbook } from '../port';
 import { areaAddress, columnsOf, isSingle, rowsOf } from '../../formula/address';
 import { type Book, isBuiltIn, openBook } from './book';
 import { toSheetFormula } from './formula-to-sheet';
+import { markFormats, marksOf } from './marks';
 import { notKept } from './not-kept';
+import { readNotes } from './notes';
 import { STANDARD_WIDTH, heightInPixels, widthInPixels } from './pixels';
 import { readStyles } from './read-styles';
 import type { FileCell, SheetPart } from './sheet-part';
@@ -20,7 +22,11 @@ export interface ReadWorkbook {
 export async function readWorkbook(bytes: Uint8Array): Promise<ReadWorkbook> {
   const book = await openBook(bytes);
   const styles = await readStyles(book);
-  const sheets = book.sheets.map((sheet) => plainSheet(book, sheet, styles));
+  const marks = await markFormats(book);
+  const sheets = await Promise.all(book.sheets.map(async (sheet) => {
+    const [notes, marksNegative] = [await readNotes(book.archive, sheet.part), marksOf(sheet, marks)];
+    return { ...plainSheet(book, sheet, styles), ...(Object.keys(notes).length > 0 && { notes }), ...(marksNegative.length > 0 && { marksNegative }) };
+  }));
   return { workbook: { sheets, names: plainNames(book) }, notKept: await notKept(book) };
 }
 

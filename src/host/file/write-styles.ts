@@ -1,6 +1,7 @@
 // The formats of a file that we write.
 
 import type { Style } from '../port';
+import { markFormatXml } from './marks';
 import { BUILT_IN, FIRST_OWN } from './number-formats';
 import { PLAIN_FONT } from './read-styles';
 import { attributeText } from './xml';
@@ -35,7 +36,8 @@ export class StyleSheet {
       + this.#fonts.list('fonts') + this.#fills.list('fills') + this.#borders.list('borders')
       + '<cellStyleXfs count="1"><xf numFmtId="0" fontId="0" fillId="0" borderId="0"/></cellStyleXfs>'
       + this.#cells.list('cellXfs')
-      + '<cellStyles count="1"><cellStyle name="Normal" xfId="0" builtinId="0"/></cellStyles></styleSheet>';
+      + '<cellStyles count="1"><cellStyle name="Normal" xfId="0" builtinId="0"/></cellStyles>'
+      + `${markFormatXml}</styleSheet>`;
   }
 
   #add(style: Style): number {

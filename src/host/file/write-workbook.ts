@@ -7,6 +7,8 @@ import { isError } from './cell-values';
 import { metadataContentType, metadataRelation, metadataText } from './dynamic-arrays';
 import { faults } from './faults';
 import { toFileFormula } from './formula-to-file';
+import { marksXml } from './marks';
+import { noteBoxesXml, notesXml } from './notes';
 import { STANDARD_WIDTH, heightInPoints, widthInDigits } from './pixels';
 import { formulaXml, valueXml } from './sheet-part';
 import { attributeText, escapeText } from './xml';
@@ -25,11 +27,19 @@ export async function writeWorkbook(workbook: Workbook): Promise<Uint8Array> {
     { part: 'styles.xml', text: styles.toXml(), relation: `${OFFICE}/styles`, content: `${CONTENT}.styles+xml` },
     ...(writers.some(({ spills }) => spills) ? [{ part: 'metadata.xml', text: metadataText, relation: metadataRelation, content: metadataContentType }] : []),
   ];
-  put('[Content_Types].xml', contentTypes(parts));
+  const noted = workbook.sheets.flatMap(({ notes = {} }, i) => (Object.keys(notes).length > 0 ? [{ number: i + 1, notes }] : []));
+  put('[Content_Types].xml', contentTypes(parts, noted.map(({ number }) => number)));
   put('_rels/.rels', relationships([{ target: 'xl/workbook.xml', type: `${OFFICE}/officeDocument` }]));
   put('xl/workbook.xml', workbookXml(workbook));
   put('xl/_rels/workbook.xml.rels', relationships(parts.map(({ part, relation }) => ({ target: part, type: relation }))));
   for (const { part, text } of parts) put(`xl/${part}`, text);
+  for (const { number, notes } of noted) {
+    put(`xl/worksheets/_rels/sheet${number}.xml.rels`, relationships([
+      { target: `../comments${number}.xml`, type: `${OFFICE}/comments` }, { target: `../drawings/vmlDrawing${number}.vml`, type: `${OFFICE}/vmlDrawing` },
+    ]));
+    put(`xl/comments${number}.xml`, DECLARATION + notesXml(notes));
+    put(`xl/drawings/vmlDrawing${number}.vml`, noteBoxesXml(notes));
+  }
   return zip.generateAsync({ type: 'uint8array', compression: 'DEFLATE' });
 }
 
@@ -48,10 +58,13 @@ const CONTENT = 'application/vnd.openxmlformats-officedocument.spreadsheetml';
 
 const isSheetName = (name: string): boolean => /^[^[\]:*?/\\]{1,31}$/.test(name) && !name.startsWith("'") && !name.endsWith("'");
 
-const contentTypes = (parts: Part[]): string => `${DECLARATION}<Types xmlns="${PACKAGE}/content-types">`
+/** @param noted numbers of the sheets with notes */
+const contentTypes = (parts: Part[], noted: number[]): string => `${DECLARATION}<Types xmlns="${PACKAGE}/content-types">`
   + '<Default Extension="rels" ContentType="application/vnd.openxmlformats-package.relationships+xml"/><Default Extension="xml" ContentType="application/xml"/>'
+  + (noted.length > 0 ? '<Default Extension="vml" ContentType="application/vnd.openxmlformats-officedocument.vmlDrawing"/>' : '')
   + `<Override PartName="/xl/workbook.xml" ContentType="${CONTENT}.sheet.main+xml"/>`
-  + `${parts.map(({ part, content }) => `<Override PartName="/xl/${part}" ContentType="${content}"/>`).join('')}</Types>`;
+  + `${parts.map(({ part, content }) => `<Override PartName="/xl/${part}" ContentType="${content}"/>`).join('')}`
+  + `${noted.map((number) => `<Override PartName="/xl/comments${number}.xml" ContentType="${CONTENT}.comments+xml"/>`).join('')}</Types>`;
 
 const relationships = (list: { target: string; type: string }[]): string => `${DECLARATION}<Relationships xmlns="${PACKAGE}/relationships">`
   + `${list.map(({ target, type }, i) => `<Relationship Id="rId${i + 1}" Type="${type}" Target="${target}"/>`).join('')}</Relationships>`;
@@ -79,11 +92,12 @@ class SheetWriter {
   }
 
   toXml(isFirst: boolean): string {
-    const { merges, frozen } = this.sheet;
+    const { merges, frozen, marksNegative = [], notes = {} } = this.sheet;
     const areas = merges.filter((merge) => isMerge(parseArea(merge)));
-    return `${DECLARATION}<worksheet xmlns="${MAIN}"><sheetViews><sheetView${attributeText({ tabSelected: isFirst ? 1 : undefined, workbookViewId: 0 })}>`
+    return `${DECLARATION}<worksheet xmlns="${MAIN}" xmlns:r="${OFFICE}"><sheetViews><sheetView${attributeText({ tabSelected: isFirst ? 1 : undefined, workbookViewId: 0 })}>`
       + `${paneXml(frozen)}</sheetView></sheetViews><sheetFormatPr defaultRowHeight="15"/>${this.#columnsXml()}<sheetData>${this.#rowsXml()}</sheetData>`
-      + `${areas.length > 0 ? `<mergeCells count="${areas.length}">${areas.map((ref) => `<mergeCell${attributeText({ ref })}/>`).join('')}</mergeCells>` : ''}</worksheet>`;
+      + `${areas.length > 0 ? `<mergeCells count="${areas.length}">${areas.map((ref) => `<mergeCell${attributeText({ ref })}/>`).join('')}</mergeCells>` : ''}`
+      + `${marksXml(marksNegative)}${Object.keys(notes).length > 0 ? '<legacyDrawing r:id="rId2"/>' : ''}</worksheet>`;
   }
 
   #columnsXml(): string {

@@ -128,6 +128,14 @@ describe('the form of a file', () => {
     expect(await after('FREQ(A1:A2,100)')).toEqual([false, false, false]);
   });
 
+  it('with macros, charts and parts that nobody knows keeps them byte for byte', async () => {
+    const parts = { 'vbaProject.bin': { type: 'vbaProject', xml: '\u0000\u0001 no XML \uffff' }, 'theirs/own.xml': { type: 'theirs', xml: '<own  a = "1"/>' } };
+    const raw = plan(`<row r="1">${fold('A1', 'FREQ(70,100)')}</row>`, { parts });
+    const { saved, read } = await recalculated(raw);
+    expect(await read('A1')).toEqual([[30]]);
+    for (const part of Object.keys(parts)) expect(await partOf(saved, `xl/${part}`)).toBe(await partOf(await rawWorkbook(raw), `xl/${part}`));
+  });
+
   it('with text of several formats, line ends, escapes and characters of every kind reads as the text', async () => {
     const strings = '<sst xmlns="http://schemas.openxmlformats.org/spreadsheetml/2006/main"><si><r><t>Low </t></r><r><rPr><b/></rPr><t>edge</t></r><rPh sb="0" eb="1"><t>no</t></rPh></si><si><t xml:space="preserve"> &lt;b&gt; &amp;amp; _x000D__x005F_x0041_ 😀 </t></si></sst>';
     const rows = '<row r="1"><c r="A1" t="s"><v>0</v></c><c r="B1" t="s"><v>1</v></c><c r="C1" t="b"><v>1</v></c><c r="D1" t="e"><v>#DIV/0!</v></c><c r="E1" t="d"><v>2026-12-01</v></c></row>';
