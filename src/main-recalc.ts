@@ -54,9 +54,17 @@ async function run(args: string[]): Promise<number> {
   }
 }
 
-async function recalculate({ input, output, settings, plain }: Job): Promise<number> {
-  if (plain && await isSameFile(input, output)) throw new Refusal('A plain copy is another file than the workbook: give --out another name.');
+async function recalculate(job: Job): Promise<number> {
   const progress = new Progress();
+  try {
+    return await recalculateWith(progress, job);
+  } finally {
+    progress.end(); // a sentence that follows has a line of its own
+  }
+}
+
+async function recalculateWith(progress: Progress, { input, output, settings, plain }: Job): Promise<number> {
+  if (plain && await isSameFile(input, output)) throw new Refusal('A plain copy is another file than the workbook: give --out another name.');
   const bytes = await refusing(input, () => readFile(input));
   await refusing(output, () => checkPlace(output));
   const file = await refusing(input, () => WorkbookFile.open(bytes));
@@ -253,6 +261,7 @@ class Progress {
 
   end(): void {
     if (this.#terminal && this.#shown) process.stderr.write('\r\x1b[K');
+    this.#shown = false;
   }
 }
 

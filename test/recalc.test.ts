@@ -236,6 +236,7 @@ describe('what can not be done ends with exit code 2, one sentence, and nothing 
     ['a result inside a file',         ['plan.xlsx', '--out', 'plan.csv/done.xlsx'],       'plan.csv/done.xlsx: There is no such folder.'],
     ['a result that is a folder',      ['plan.xlsx', '--out', 'folder.xlsx'],              'folder.xlsx: This is a folder.'],
     ['a result of another kind',       ['plan.xlsx', '--out', 'done.csv'],                 'The result is a file of the same kind as the workbook: give it a name that ends with .xlsx.'],
+    ['macros into a file without',     ['macros.xlsm', ...out],                            'The result is a file of the same kind as the workbook: give it a name that ends with .xlsm.'],
     ['no workbook',                    [],                                                 'Name the workbook to recalculate, such as plan.xlsx; --help shows more.'],
     ['two workbooks',                  ['plan.xlsx', 'more.xlsx', ...out],                 'Name one workbook, not 2: plan.xlsx, more.xlsx.'],
     ['no result',                      ['plan.xlsx'],                                      'Say where the result goes, such as --out done.xlsx; it may be the workbook itself.'],

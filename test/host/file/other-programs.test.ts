@@ -128,7 +128,7 @@ describe('the form of a file', () => {
     expect(await after('FREQ(A1:A2,100)')).toEqual([false, false, false]);
   });
 
-  it('with macros, charts and parts that nobody knows keeps them byte for byte', async () => {
+  it('with macros, and with parts that nobody knows, keeps them as they are', async () => {
     const parts = { 'vbaProject.bin': { type: 'vbaProject', xml: '\u0000\u0001 no XML \uffff' }, 'theirs/own.xml': { type: 'theirs', xml: '<own  a = "1"/>' } };
     const raw = plan(`<row r="1">${fold('A1', 'FREQ(70,100)')}</row>`, { parts });
     const { saved, read } = await recalculated(raw);
