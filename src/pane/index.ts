@@ -98,9 +98,10 @@ export async function mountPane(host: LiveHost, root: HTMLElement, version: stri
     faults.show(all.length > 0 ? [noticeList(all)] : []);
   }
 
+  /** What went wrong stands beside what was done, until something else is done. */
   function tell(sentence: string, kind: 'news' | 'fault'): void {
-    failure = kind === 'fault' && sentence !== '' ? sentence : null;
-    news.show(kind === 'news' && sentence !== '' ? [element('p', {}, sentence)] : []);
+    failure = kind === 'fault' ? sentence : null;
+    if (kind === 'news') news.show(sentence === '' ? [] : [element('p', {}, sentence)]);
     showFaults();
   }
 

@@ -24,6 +24,7 @@ export function tabs(document: Document, label: string, sections: { title: strin
     const tab = toDom(document, element('button', { type: 'button', role: 'tab', id: `foldplan-tab-${i}`, 'aria-controls': `foldplan-section-${i}` }, title)) as HTMLElement;
     const panel = toDom(document, element('div', { class: 'section', role: 'tabpanel', id: `foldplan-section-${i}`, 'aria-labelledby': `foldplan-tab-${i}` })) as HTMLElement;
     panel.append(content);
+    panel.hidden = true;
     tab.addEventListener('click', () => choose(i));
     tab.addEventListener('keydown', (event) => {
       const step = STEPS[event.key];

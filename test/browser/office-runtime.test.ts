@@ -10,9 +10,11 @@ import type { FunctionMetadata } from '../../src/host/sheet/functions-runtime';
 import { launchBrowser, outputFile, siteFile, watch } from '../support/browser';
 import { call } from '../support/built-functions';
 import { FULL_CALLS, asCells } from '../support/full-calls';
+import { evaluate } from '../support/evaluate';
 import { contractWorkbook } from '../support/host-contract';
 import { type Outcome, type WebHost, openInWebHost } from '../support/played-excel/web-host';
 import { WorkbookModel } from '../support/played-excel/workbook-model';
+import { planOf } from '../support/workbook';
 
 const BASE = 'https://plan.example/tools/foldplan';
 const site = outputFile('self-hosted');
@@ -165,12 +167,78 @@ describe('the pane in the real runtime', () => {
     host = await openInWebHost(browser, site, BASE, workbook);
     const pane = host.addIn.locator('#pane');
     await pane.getByText('Beacon').first().waitFor();
-    const before = await pane.innerText();
     await host.page.screenshot({ path: outputFile('pane-in-web-host.png') });
     workbook.range('Fold_Rate')!.Formulas = [[250]];
-    await expect.poll(() => pane.innerText()).not.toBe(before);
-    expect(await pane.innerText()).toContain('250');
+    await expect.poll(() => pane.innerText(), { timeout: 20_000 }).toContain('250');
     expect(host.watched).toEqual({ console: [], strayRequests: [] });
+  });
+});
+
+describe('the sections of the pane in the real runtime', () => {
+  const bands = [['Airband', 118, 137], ['AIS', 161.9625, 162.0375]] as const;
+  const header = "Low [MHz] 'x' #1";
+  const unset: Workbook = planOf([['Sample rate', 245.76, 'MHz'], ['Guard', 0.5, 'MHz'], [], ['Name', 'Low edge', 'High edge'], ...bands.map((band) => [...band])]);
+  let host: WebHost;
+  let workbook: WorkbookModel;
+  afterEach(async () => {
+    expect(host.watched).toEqual({ console: [], strayRequests: [] });
+    await host.close();
+  });
+
+  const pane = () => host.addIn.locator('#pane');
+  const expectPane = (text: string | RegExp) => expect.poll(() => pane().innerText(), { timeout: 20_000 }).toMatch(text);
+  const press = (name: string) => pane().getByRole('button', { name, exact: true }).click();
+  const openSection = (name: string) => pane().getByRole('tab', { name, exact: true }).click();
+
+  async function setUp(): Promise<void> {
+    host = await openInWebHost(browser, site, BASE, workbook);
+    await expectPane(/Found on the sheet Plan, 2 rows/);
+    await press('Use this plan');
+    await expectPane('The plan is stored in the workbook.');
+    expect(workbook.Names.refersTo).toEqual({
+      Fold_Name: 'Plan!$A$5:$A$6', Fold_Low: 'Plan!$B$5:$B$6', Fold_High: 'Plan!$C$5:$C$6', Fold_Rate: 'Plan!$B$1', Fold_Guard: 'Plan!$B$2',
+    });
+    await openSection('Columns');
+    for (const result of ['Zone', 'Inverted']) await pane().getByRole('checkbox', { name: new RegExp(`^${result}`) }).uncheck();
+  }
+
+  it('set a plan up, insert columns beside it, and take both back', async () => {
+    workbook = new WorkbookModel(structuredClone(unset), evaluate);
+    const before = workbook.snapshot();
+    await setUp();
+    const stored = workbook.snapshot();
+    await press('Insert 4 columns');
+    await expectPane('Inserted 4 columns at D4:G6.');
+    expect(workbook.range('Plan!D4:G5')!.Formulas).toEqual([
+      ['Folded low', 'Folded high', 'Margin', 'Check'],
+      ['=FOLD.LOW(B5,C5,Fold_Rate)', '=FOLD.HIGH(B5,C5,Fold_Rate)', '=FOLD.MARGIN(B5,C5,Fold_Rate,Fold_Guard)', '=FOLD.CHECK(B5,C5,Fold_Rate,Fold_Guard)'],
+    ]);
+    expect(workbook.range('Plan!D5:D6')!.Values).toEqual(bands.map(([, low, high]) => [call('LOW', low, high, 245.76)[0]![0]]));
+    await host.page.screenshot({ path: outputFile('pane-columns-in-web-host.png') });
+    await press('Undo');
+    await expectPane('Undone: the workbook is as it was before.');
+    expect(workbook.snapshot()).toEqual(stored);
+    await openSection('Plan');
+    await press('Undo');
+    await expectPane('Undone: the workbook is as it was before.');
+    expect(workbook.snapshot()).toEqual(before);
+  });
+
+  it('give a structured table columns with its column names, and say what they show', async () => {
+    workbook = new WorkbookModel(structuredClone(unset), evaluate);
+    workbook.Tables.put('Bands', workbook.range('Plan!A4:C6')!);
+    await setUp();
+    workbook.range('Plan!B4')!.Formulas = [[header]];
+    expect(await pane().getByRole('radio', { name: 'columns of the table Bands' }).isChecked()).toBe(true);
+    await expectPane('Insert 4 columns');
+    await press('Insert 4 columns');
+    // The model of the workbook computes no structured references.
+    await expectPane('D5 shows #NAME?: the worksheet functions, or a name in the formula, are not known here. So do 7 cells more.');
+    expect(workbook.Tables.all[0]!.range.Address).toBe('Plan!A4:G6');
+    expect(workbook.range('Plan!D5')!.Formulas).toEqual([["=FOLD.LOW([@[Low '[MHz'] ''x'' '#1]],[@[High edge]],Fold_Rate)"]]);
+    await press('Undo');
+    await expectPane('Undone: the workbook is as it was before.');
+    expect(workbook.Tables.all[0]!.range.Address).toBe('Plan!A4:C6');
   });
 });
 

@@ -35,7 +35,7 @@ export async function stage(workbook: Workbook, make: MakeSection, between: (hos
   const refresh = async () => section.show(figuresOf(await readPlan(used)), null);
   const section = make({
     document, host: used, version: '1.2.3', refresh,
-    tell: (sentence, kind) => Object.assign(told, { news: '', fault: '', [kind]: sentence }),
+    tell: (sentence, kind) => Object.assign(told, kind === 'fault' ? { fault: sentence } : { news: sentence, fault: '' }),
   });
   document.body.append(section.place);
   await refresh();

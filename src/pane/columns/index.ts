@@ -42,6 +42,7 @@ export const columnsSection: MakeSection = (surroundings) => {
   place.className = 'columns';
   const lacking = slot(document, 'lacking');
   const body = document.createElement('div');
+  body.hidden = true;
   const results = RESULT_KEYS.map((key) => {
     const { place: own, input } = choice('checkbox', '', sentences.titles[key], sentences.hints[key]);
     input.addEventListener('change', () => {
