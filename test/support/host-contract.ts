@@ -271,6 +271,19 @@ export function testLiveHost(name: string, open: (workbook: Workbook) => Promise
       expect(state()).toEqual(before);
     });
 
+    it('takes back looks, whatever their cells hold by then', async () => {
+      const { host, settle, state } = await start();
+      await host.write('Plan!J1', [[5]]);
+      await settle();
+      const written = state();
+      await host.write('Plan!J1', [[4]]);
+      const undo = await host.change({ looks: [{ reference: 'Plan!J1', look: { numberFormat: '0.0', bold: true, width: 33, note: 'note', marksNegative: true } }] });
+      await host.write('Plan!J1', [[5]]);
+      await undo();
+      await settle();
+      expect(state()).toEqual(written);
+    });
+
     it.each<[string, Change, string, CellInput]>([
       ['a written cell',         { cells: [{ reference: 'Plan!J1:J2', cells: [[1], [2]] }] }, 'Plan!J2',       3],
       ['a cell that was blank',  { cells: [{ reference: 'Plan!A3', cells: [[null]] }] },      'Plan!A3',       5],

@@ -24,15 +24,18 @@ export function makeChange(workbook: OpenWorkbook, change: Change): () => void {
   if (tableColumns.length > 0) throw faults.noTables(tableColumns[0]!.table);
   if (sheets.length + cells.length + looks.length + Object.keys(names).length === 0) return () => {};
   const places: Place[] = [];
-  const place = (reference: string): Found => {
+  const place = (reference: string): Place => {
     const found = workbook.find(reference);
     if (!found) throw faults.unknown(reference);
-    places.push({ reference, ...found });
-    return found;
+    return { reference, ...found };
   };
   const step = Step.of(workbook.injector, workbook.id, (running) => {
     for (const sheet of sheets) addSheet(running, workbook, sheet);
-    for (const { reference, cells: rows } of cells) writeCells(running, reference, place(reference), rows);
+    for (const { reference, cells: rows } of cells) {
+      const written = place(reference);
+      writeCells(running, written, rows);
+      places.push(written);
+    }
     for (const { reference, look } of looks) setLook(running, workbook, place(reference), look);
     for (const [name, refersTo] of Object.entries(names)) setName(running, workbook, name, refersTo);
   });
@@ -58,7 +61,7 @@ function addSheet(step: Step, workbook: OpenWorkbook, { name, copyOf }: NonNulla
   if (original) copyNotesAndMarks(step, workbook, original, id);
 }
 
-function writeCells(step: Step, reference: string, { sheet, range }: Found, cells: CellInput[][]): void {
+function writeCells(step: Step, { reference, sheet, range }: Place, cells: CellInput[][]): void {
   const rows = range.endRow - range.startRow + 1;
   const columns = range.endColumn - range.startColumn + 1;
   const other = cells.find((row) => row.length !== columns);
