@@ -15,11 +15,10 @@ import { ladderPicture } from './picture';
 import { stepThroughBands } from './stepping';
 import { type LadderView, WHOLE, panned, zoomed } from './view';
 
-export interface Panel {
+export interface LadderPanel {
   place: HTMLElement;
   show(figures: PlanFigures | null, selected: number | null): void;
   resize(width: number): void;
-  close(): void;
 }
 
 const IN = 0.6;
@@ -29,7 +28,7 @@ const TAKEN_OUT = 760;
 const TOLD = 3;
 
 /** @param pick told the row of a band that was picked, as its place in the columns */
-export function ladderPanel(surroundings: Surroundings, pick: (row: number) => void): Panel {
+export function ladderPanel(surroundings: Surroundings, pick: (row: number) => void): LadderPanel {
   const { document } = surroundings;
   const picture = slot(document, 'picture');
   const stepping = stepThroughBands(document, picture.place, pick);
@@ -106,7 +105,6 @@ export function ladderPanel(surroundings: Surroundings, pick: (row: number) => v
       width = now;
       draw();
     },
-    close: () => {},
   };
 }
 

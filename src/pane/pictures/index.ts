@@ -64,7 +64,6 @@ export const picturesSection: MakeSection = (surroundings) => {
     },
     close() {
       sizes.disconnect();
-      ladder.close();
       ruler.close();
     },
   };

@@ -1,6 +1,7 @@
 // The rate ruler on the page: its picture, the candidate that moves over it, and the rate cell it is written to.
 
 import { Fault, type ForbiddenRates } from '../../engine';
+import { HostFault } from '../../host/port';
 import { attempts } from '../attempt';
 import { element } from '../element';
 import { type PlanFigures, figuresOf } from '../figures';
@@ -380,7 +381,9 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
         renewRules();
         draw();
       }
-      if (shown) void recall().catch(() => {}); // what can't be read is as if it were not remembered
+      if (shown) void recall().catch((fault: unknown) => {
+        if (!(fault instanceof HostFault)) throw fault; // what can't be read is as if it were not remembered
+      });
     },
     resize(given) {
       if (given === width || given === 0) return;
