@@ -76,7 +76,7 @@ function bandGroup({ figures, selected, pieces, links, image }: BandLayout, { fr
   const shownState = row.role === 'wanted' ? state.replace(' ', '-') : 'clear';
   return element('g', {
     class: `band ${row.role} ${shownState}${selected ? ' selected' : ''}`, 'data-row': row.index, tabindex: -1,
-    role: 'button', 'aria-label': words, 'aria-pressed': selected ? 'true' : 'false',
+    role: 'button', 'aria-pressed': selected ? 'true' : 'false',
   },
     element('title', {}, words),
     ...pieces.filter(({ zone, lastZone }) => zone === lastZone).map(({ shape }) =>
@@ -105,8 +105,9 @@ function corners({ x, width, y, height }: BarShape): Tree {
   return element('path', { class: 'picked', d });
 }
 
+/** The band's title says more; a label that stands twice would only blur it. */
 function labelElement({ x, y, anchor, inside, text, suffix, size }: BarLabel): Tree {
-  return element('text', { class: inside ? 'label inside' : 'label', x: round(x), y: round(baseline(y, size)), 'font-size': size, 'text-anchor': anchor },
+  return element('text', { 'aria-hidden': 'true', class: inside ? 'label inside' : 'label', x: round(x), y: round(baseline(y, size)), 'font-size': size, 'text-anchor': anchor },
     text, ...(suffix === '' ? [] : [element('tspan', { class: 'state' }, suffix)]));
 }
 

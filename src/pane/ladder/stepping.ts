@@ -27,7 +27,7 @@ export function stepThroughBands(document: Document, picture: HTMLElement, pick:
   const bands = () => [...picture.querySelectorAll<SVGElement>('.band[data-row]')];
   const bandOf = (target: EventTarget | null) => (target as Element | null)?.closest?.('.band[data-row]') ?? null;
   const tell = (band: Element | null) => {
-    readout.textContent = band?.getAttribute('aria-label') ?? (bands().length > 0 ? sentences.readoutHint : '');
+    readout.textContent = band?.querySelector('title')?.textContent ?? (bands().length > 0 ? sentences.readoutHint : '');
   };
   const atHand = () => bandOf(document.activeElement);
 
