@@ -10,13 +10,14 @@ export function noticeList(notices: string[]): Tree {
   return element('ul', { class: 'notices' }, ...notices.map((notice) => element('li', {}, notice)));
 }
 
-export function headlineSection({ outcome, verdict, facts, objections, remarks }: Headline): Tree {
+export function headlineSection({ outcome, verdict, facts, against, objections, remarks }: Headline): Tree {
   return element('section', { class: 'headline', 'data-outcome': outcome },
     element('p', { class: 'verdict', role: 'status' }, verdict),
     ...remarks.map((remark) => element('p', { class: 'remark' }, remark)),
     element('dl', { class: 'facts' }, ...facts.map(({ what, figure }) => element('div', {}, element('dt', {}, what), element('dd', {}, figure)))),
-    ...(objections.length > 0
-      ? [element('details', { 'data-keep': 'objections' }, element('summary', {}, sentences.against(objections.length)), noticeList(objections))]
+    ...(against > 0
+      ? [element('details', { 'data-keep': 'objections' }, element('summary', {}, sentences.against(against)),
+        noticeList([...objections, ...(against > objections.length ? [sentences.andMore(against - objections.length)] : [])]))]
       : []));
 }
 

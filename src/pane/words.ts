@@ -10,7 +10,8 @@ export interface Headline {
   outcome: 'works' | 'narrowly' | 'fails' | 'open';
   verdict: string;
   facts: { what: string; figure: string }[];
-  /** What speaks against the rate, the worst first. */
+  /** How many things speak against the rate, and a sentence for each of the worst. */
+  against: number;
   objections: string[];
   remarks: string[];
 }
@@ -37,6 +38,7 @@ export function headline(figures: PlanFigures): Headline {
   const smallest = wanted.reduce<BandFigures | null>((least, band) => (least === null || band.margin < least.margin ? band : least), null);
   const unread = rows.length - bands.length;
   const { facts } = sentences;
+  const objections = [...wanted.filter(({ state }) => state !== 'clear').map(bandObjection), ...pairs.map((pair) => pairObjection(pair, plan.guard))];
   return {
     outcome,
     verdict: verdictOf(figures),
@@ -51,8 +53,8 @@ export function headline(figures: PlanFigures): Headline {
       ...(plan.guard > 0 ? [{ what: facts.near, figure: String(pairs.length - overlaps) }] : []),
       ...(smallest ? [{ what: facts.margin, figure: sentences.marginOf(exactFigure(smallest.margin), isolated(smallest.row.name)) }] : []),
     ],
-    objections: [...wanted.filter(({ state }) => state !== 'clear').map(bandObjection), ...pairs.map((pair) => pairObjection(pair, plan.guard))]
-      .sort((a, b) => a.severity - b.severity || a.by - b.by).map(({ sentence }) => sentence),
+    against: objections.length,
+    objections: objections.sort((a, b) => a.severity - b.severity || a.by - b.by).slice(0, OBJECTIONS_TOLD).map(({ sentence }) => sentence()),
     remarks: [
       ...(unread > 0 ? [sentences.asFarAsRead(unread)] : []),
       ...(plan.ppm > 0 && pairs.length === 0 && outcome !== 'open' ? [sentences.nominalGaps(rate)] : []),
@@ -72,20 +74,24 @@ export function bandSentence({ row, low, high, zone, inverted, imageLow, imageHi
 interface Objection {
   severity: 0 | 1;
   by: number;
-  sentence: string;
+  sentence(): string;
 }
 
+/** A plan of hundreds of bands can hold thousands of overlaps. */
+const OBJECTIONS_TOLD = 50;
+
 function bandObjection({ row, state, check, margin }: BandFigures): Objection {
-  const name = isolated(row.name);
-  const sentence = state === 'tight' ? sentences.tight(name, exactFigure(margin))
-    : state === 'too wide' ? sentences.tooWide(name, exactFigure(margin))
-    : sentences.crosses(name, check.replace('crosses ', ''), exactFigure(margin));
+  const sentence = () => {
+    const name = isolated(row.name);
+    if (state === 'tight') return sentences.tight(name, exactFigure(margin));
+    return state === 'too wide' ? sentences.tooWide(name, exactFigure(margin)) : sentences.crosses(name, check.replace('crosses ', ''), exactFigure(margin));
+  };
   return { severity: state === 'tight' ? 1 : 0, by: margin, sentence };
 }
 
 function pairObjection({ first, second, gap, low, high }: Pair, guard: number): Objection {
-  const names = [isolated(first.row.name), isolated(second.row.name)] as const;
+  const names = () => [isolated(first.row.name), isolated(second.row.name)] as const;
   return gap < 0
-    ? { severity: 0, by: gap, sentence: sentences.overlap(...names, exactFigure(-gap), exactFigure(low), exactFigure(high)) }
-    : { severity: 1, by: gap - guard, sentence: sentences.near(...names, exactFigure(gap), exactFigure(guard)) };
+    ? { severity: 0, by: gap, sentence: () => sentences.overlap(...names(), exactFigure(-gap), exactFigure(low), exactFigure(high)) }
+    : { severity: 1, by: gap - guard, sentence: () => sentences.near(...names(), exactFigure(gap), exactFigure(guard)) };
 }

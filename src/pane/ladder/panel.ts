@@ -126,11 +126,11 @@ function roleChoice(document: Document, take: (role: LadderView['role']) => void
 function pictureToTake(figures: PlanFigures | null, view: LadderView): Picture | null {
   const layout = figures && ladderLayout(figures, TAKEN_OUT, { ...view, selected: null });
   if (!layout) return null;
-  const { verdict, objections } = headline(figures);
+  const { verdict, against, objections } = headline(figures);
   const rate = exactFigure(figures.plan.rate!);
   return {
     tree: ladderPicture(layout, verdict),
-    facts: sentences.ladderFacts(rate, verdict, layout.bands.length, objections.slice(0, TOLD), Math.max(0, objections.length - TOLD)),
+    facts: sentences.ladderFacts(rate, verdict, layout.bands.length, objections.slice(0, TOLD), Math.max(0, against - TOLD)),
     fileName: sentences.fileName.ladder(rate),
   };
 }
