@@ -57,9 +57,9 @@ export interface Look {
   bold?: boolean;
   /** Widths of their columns in pixels. */
   width?: number;
-  /** A note on the first cell; '' takes one away. */
+  /** A note on the first cell; '' takes one away. Left out where the host or the cell can't have one. */
   note?: string;
-  /** Whether numbers below 0 stand out, by a conditional format. */
+  /** Whether numbers below 0 stand out, by a conditional format; false takes away the one that was set for exactly these cells. */
   marksNegative?: boolean;
 }
 
@@ -125,7 +125,8 @@ export interface LiveHost extends Host {
 
   /**
    * Changes the workbook, all of it or nothing: after a HostFault it is as it was. The user's own undo takes it back in one step where the
-   * host allows it; the returned function does so everywhere.
+   * host allows it; the returned function does so everywhere, unless cells, sheets or names that the change wrote hold something else since:
+   * then it throws HostFault and leaves all as it is.
    */
   change(change: Change): Promise<() => Promise<void>>;
   /** Puts a picture on the sheet, its upper left corner at the reference's. */
