@@ -224,7 +224,7 @@ describe('the pane for everyone', () => {
     ['forced colours', { forcedColors: 'active' }],
     ['dark forced colours', { forcedColors: 'active', colorScheme: 'dark' }],
   ] as const;
-  const SECTIONS = ['Plan', 'Columns', 'Pictures'];
+  const SECTIONS = ['Plan', 'Columns', 'Pictures', 'Hand over'];
 
   interface Finding { id: string; nodes: { target: string[]; failureSummary: string }[] }
   const findings = async () => {

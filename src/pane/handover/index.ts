@@ -46,9 +46,9 @@ export const handOverSection: MakeSection = (surroundings) => {
   const troubles = slot(document, 'troubles');
   const reentering = button('', '', () => attempt(reenter));
   place.append(
-    toDom(document, element('h3', {}, sentences.plain)), toDom(document, element('p', { class: 'hint' }, sentences.about)),
+    toDom(document, element('h2', {}, sentences.plain)), toDom(document, element('p', { class: 'hint' }, sentences.about)),
     none.place, field, buttons, progress.place,
-    toDom(document, element('h3', {}, sentences.troubles)), troubles.place, reentering,
+    toDom(document, element('h2', {}, sentences.troubles)), troubles.place, reentering,
   );
   cancelling.hidden = true;
   draw();
