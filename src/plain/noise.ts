@@ -1,6 +1,6 @@
 // The row functions of the noise family as native formulas.
 
-import { type Equivalent, type Expression, NONE, NoEquivalent, WRONG, areNumbers, byWord, compares, isEmpty, optionalNumber, unlessBlank, where } from './native';
+import { type Equivalent, type Expression, NONE, NoEquivalent, WRONG, areNumbers, byWord, compares, isEmpty, optionalNumber, settled, unlessBlank, where } from './native';
 import { reasons } from './sentences';
 
 export const JITTERSNR: Equivalent = {
@@ -61,9 +61,9 @@ export const NOISEFOLD: Equivalent = {
 export const DROOP: Equivalent = {
   least: 2,
   most: 3,
-  rounds: false,
+  rounds: true,
   write: (f, r, hold) => unlessBlank(f, where([areNumbers(f, r), compares(f, '>=', 0), compares(r, '>', 0)], byWord(hold, ['nrz', 'rz', 'doublet'], (word) => {
-    const turns = word === 'nrz' ? `${f.text}/${r.text}` : `${f.text}/${r.text}/2`;
+    const turns = `${settled(`${f.text}/${r.text}`, `${f.text}/${r.text}`)}${word === 'nrz' ? '' : '/2'}`;
     const angle = word === 'nrz' ? `(PI()*${f.text}/${r.text})` : `(PI()*${f.text}/${r.text}/2)`;
     const level = {
       nrz: `20*LOG10(ABS(SIN${angle}/${angle}))`,

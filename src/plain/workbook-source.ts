@@ -1,11 +1,12 @@
 // The formulas of a workbook as plain data, for the plain copy.
 
-import { areaOf as areaFrom, parseArea } from '../formula/address';
 import { parseA1Ref } from '@borgar/fx/xlsx';
+import { areaOf as areaFrom, parseArea } from '../formula/address';
 import type { Workbook } from '../host/port';
 import type { PlainSource } from './plain-copy';
 import type { SheetArea } from './plain-formula';
 
+/** A workbook's own tables and rules are no part of plain data: formulas name their cells. */
 export function workbookSource({ sheets, names }: Workbook): PlainSource {
   const sheetNamed = (name: string) => sheets.find((sheet) => sheet.name.toLowerCase() === name.toLowerCase())?.name;
   const meanings = new Map(Object.entries(names).map(([name, text]) => [name.toLowerCase(), text]));
