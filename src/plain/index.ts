@@ -4,4 +4,3 @@ export { EQUIVALENTS } from './equivalents';
 export { callsOurs } from './plain-formula';
 export { workbookSource } from './workbook-source';
 export { type Maker, type OnProgress, type Outcome, type PlainCopy, type PlainSource, plainCopy } from './plain-copy';
-export { workbookSource } from './workbook-source';
