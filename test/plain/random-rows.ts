@@ -54,6 +54,7 @@ function band(random: Random, any: Grid): [number, number] {
   const low = random.unit() < 0.1 ? 0 : frequency(random, any);
   const manner = random.unit();
   if (manner < 0.1) return [low, low];
+  if (manner < 0.25) return [low, Math.min(any.most, Math.floor(((Math.floor((2 * low) / any.rate) + random.whole(1, 2)) * any.rate) / 2))]; // up to an edge
   const high = manner < 0.6 ? Math.min(any.most, low + random.whole(0, any.rate)) : frequency(random, any);
   return low <= high ? [low, high] : [high, low];
 }
