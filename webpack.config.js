@@ -75,7 +75,7 @@ const common = (name, mode) => ({
   name,
   mode,
   context: root,
-  devtool: mode === 'production' ? 'source-map' : 'eval-source-map',
+  devtool: mode === 'production' ? 'source-map' : 'cheap-source-map',
   resolve: { extensions: ['.ts', '.js'] },
   performance: { hints: false },
   cache: { type: 'filesystem', cacheDirectory: at('.cache'), name: `${name}-${mode}`, buildDependencies: { config: [import.meta.filename] } },

@@ -15,25 +15,30 @@ const axe = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.mi
 
 let browser: Browser;
 let site: Site;
+/** What most tests share: a browser that has loaded the site before reads it from its cache. */
+let shared: BrowserContext;
 let context: BrowserContext;
 let page: Page;
 let watched: Watched;
 
+const WIDE = { viewport: { width: 1400, height: 900 } };
+
 beforeAll(async () => {
   [browser, site] = await Promise.all([launchBrowser(), serveSite()]);
+  shared = await browser.newContext(WIDE);
 });
 afterAll(async () => {
   await browser.close();
   await site.close();
 });
 afterEach(async () => {
-  await context.close();
+  await (context === shared ? page.close() : context.close());
   expect(watched).toEqual({ console: [], strayRequests: [] });
 });
 
 /** Opens the workbench, on a workbook where one is given. */
-async function open(workbook: Workbook | null, options: Parameters<Browser['newContext']>[0] = {}): Promise<void> {
-  context = await browser.newContext({ viewport: { width: 1400, height: 900 }, ...options });
+async function open(workbook: Workbook | null, options?: Parameters<Browser['newContext']>[0]): Promise<void> {
+  context = options ? await browser.newContext({ ...WIDE, ...options }) : shared;
   page = await context.newPage();
   watched = watch(page, site.address);
   await page.goto(`${site.address}/workbench.html`);

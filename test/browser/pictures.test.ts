@@ -13,6 +13,7 @@ let watched: Watched;
 
 beforeAll(async () => {
   [browser, site] = await Promise.all([launchBrowser(), serveSite()]);
+  context = await browser.newContext({ viewport: { width: 1500, height: 2400 }, permissions: ['clipboard-read', 'clipboard-write'] });
 });
 afterAll(async () => {
   await browser.close();
@@ -20,7 +21,6 @@ afterAll(async () => {
 });
 
 beforeEach(async () => {
-  context = await browser.newContext({ viewport: { width: 1500, height: 2400 }, permissions: ['clipboard-read', 'clipboard-write'] });
   page = await context.newPage();
   watched = watch(page, site.address);
   await page.goto(`${site.address}/workbench.html`);
@@ -29,7 +29,7 @@ beforeEach(async () => {
   await settled('409.6');
 });
 afterEach(async () => {
-  await context.close();
+  await page.close();
   expect(watched).toEqual({ console: [], strayRequests: [] });
 });
 

@@ -12,12 +12,17 @@ import { planOf, sheetOf } from '../support/workbook';
 
 let browser: Browser;
 let site: Site;
+/** What most tests share: a browser that has loaded the site before reads it from its cache. */
+let shared: BrowserContext;
 let context: BrowserContext;
 let page: Page;
 let watched: Watched;
 
+const WIDE = { viewport: { width: 1400, height: 850 } };
+
 beforeAll(async () => {
   [browser, site] = await Promise.all([launchBrowser(), serveSite()]);
+  shared = await browser.newContext(WIDE);
 });
 afterAll(async () => {
   await browser.close();
@@ -25,8 +30,8 @@ afterAll(async () => {
 });
 
 /** Opens the workbench and waits until the demo plan is computed. */
-async function open(options: Parameters<Browser['newContext']>[0] = {}): Promise<void> {
-  context = await browser.newContext({ viewport: { width: 1400, height: 850 }, ...options });
+async function open(options?: Parameters<Browser['newContext']>[0]): Promise<void> {
+  context = options ? await browser.newContext({ ...WIDE, ...options }) : shared;
   page = await context.newPage();
   watched = watch(page, site.address);
   await page.goto(`${site.address}/workbench.html`);
@@ -35,7 +40,7 @@ async function open(options: Parameters<Browser['newContext']>[0] = {}): Promise
 
 beforeEach(() => open());
 afterEach(async () => {
-  await context.close();
+  await (context === shared ? page.close() : context.close());
   expect(watched).toEqual({ console: [], strayRequests: [] });
 });
 

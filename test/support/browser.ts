@@ -39,7 +39,7 @@ export async function serveSite(folder = dist): Promise<Site> {
       response.writeHead(404).end();
       return;
     }
-    response.writeHead(200, { 'content-type': file.contentType, 'cache-control': 'no-store' }).end(file.body);
+    response.writeHead(200, { 'content-type': file.contentType, 'cache-control': 'max-age=3600' }).end(file.body);
   });
   await new Promise<void>((listening) => server.listen(0, '127.0.0.1', listening));
   return {

@@ -198,7 +198,13 @@ export const columnsSection: MakeSection = (surroundings) => {
     await refresh();
     await look();
     tell(sentences.inserted(asked.results.length, addressOf(box)), 'news');
-    await host.startWithWorkbook();
+    try {
+      await host.startWithWorkbook();
+    } catch (fault) {
+      if (!(fault instanceof HostFault)) throw fault;
+      tell(fault.message, 'fault');
+    }
+    done.error = null; // an error in the new columns matters more, and is said again
     await readBack();
   }
 
