@@ -6,7 +6,12 @@ import type { AddressInfo } from 'node:net';
 import path from 'node:path';
 import { type Browser, type Page, chromium } from 'playwright-core';
 
-const root = path.join(import.meta.dirname, '../..');
+const root = rootAbove(import.meta.dirname);
+
+/** The checkout, seen from the sources or from what is built of them. */
+function rootAbove(folder: string): string {
+  return existsSync(path.join(folder, 'package.json')) ? folder : rootAbove(path.dirname(folder));
+}
 
 /** The folder of the built site. */
 export const dist = path.join(root, 'dist');
