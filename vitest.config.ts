@@ -17,7 +17,7 @@ export default defineConfig({
     include: ['test/**/*.test.ts'],
     globalSetup: ['test/support/build-once.ts'],
     // Most browser tests wait for the browser more than they work.
-    maxWorkers: availableParallelism() + 1,
+    maxWorkers: Math.max(2, availableParallelism()),
     testTimeout: 60_000,
     hookTimeout: 120_000,
   },
