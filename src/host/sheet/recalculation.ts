@@ -65,15 +65,19 @@ export class Recalculation {
     return this.until(() => !this.isRunning());
   }
 
-  /** Gives up where nothing moves for half a second, and nothing is sure to. */
+  /** Gives up where nothing moves for half a second, or for ten seconds where something is sure to: a sheet that is stuck must not hold up its user. */
   private async until(isOver: () => boolean): Promise<void> {
     let seen = this.session.state;
-    for (let looks = 0; !isOver() && looks < LOOKS; looks++) {
+    for (let looks = 0; !isOver() && looks < this.patience(); looks++) {
       await pause();
       const { state } = this.session;
-      if (state !== seen || this.certain || (this.isRunning() && !state.stopped)) looks = 0;
+      if (state !== seen) looks = 0;
       seen = state;
     }
+  }
+
+  private patience(): number {
+    return this.certain || (this.isRunning() && !this.session.state.stopped) ? 2000 : 100;
   }
 
   private isRunning(): boolean {
@@ -82,7 +86,6 @@ export class Recalculation {
   }
 }
 
-const LOOKS = 100;
 const pause = () => new Promise((resume) => setTimeout(resume, 5));
 
 /** One that was stopped, for a change that came meanwhile, goes on under its own number or under the next. */
