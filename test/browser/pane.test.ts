@@ -48,7 +48,7 @@ async function open(workbook: Workbook | null, options?: Parameters<Browser['new
   await expectText('#status', /^Opened plan\.xlsx/);
 }
 
-const expectText = (selector: string, text: RegExp | string) => expect.poll(() => page.locator(selector).innerText(), { timeout: 20_000 }).toMatch(text);
+const expectText = (selector: string, text: RegExp | string) => expect.poll(() => page.locator(selector).innerText(), { timeout: 40_000 }).toMatch(text);
 const expectPane = (text: RegExp | string) => expectText('#pane', text);
 const tab = (name: string) => page.locator('#pane').getByRole('tab', { name, exact: true });
 const button = (name: string) => page.locator('#pane').getByRole('button', { name, exact: true });

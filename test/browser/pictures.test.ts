@@ -53,9 +53,9 @@ const bar = (row: number) => page.locator(`.ladder .band[data-row="${row}"] .bar
 
 // What a user sees
 
-const expectText = (selector: string, text: RegExp | string) => expect.poll(() => page.locator(selector).textContent(), { timeout: 20_000 }).toMatch(text);
+const expectText = (selector: string, text: RegExp | string) => expect.poll(() => page.locator(selector).textContent(), { timeout: 40_000 }).toMatch(text);
 /** Waits until what is said of the candidate is computed. */
-const settled = (rate: string) => expect.poll(() => page.locator('.standing').textContent(), { timeout: 20_000 }).toMatch(new RegExp(`^${rate.replace('.', '\\.')} (works|breaks)`));
+const settled = (rate: string) => expect.poll(() => page.locator('.standing').textContent(), { timeout: 40_000 }).toMatch(new RegExp(`^${rate.replace('.', '\\.')} (works|breaks)`));
 const slider = () => page.getByRole('slider', { name: 'Candidate rate' });
 const candidate = async () => Number(await slider().getAttribute('aria-valuenow'));
 const conflicts = () => page.locator('.conflicts-list li').allTextContents();

@@ -72,7 +72,7 @@ const choose = (name: string, bytes: Uint8Array | string) => page.locator('#chos
 
 // What a user sees
 
-const expectText = (selector: string, text: RegExp | string) => expect.poll(() => page.locator(selector).textContent(), { timeout: 20_000 }).toMatch(text);
+const expectText = (selector: string, text: RegExp | string) => expect.poll(() => page.locator(selector).textContent(), { timeout: 40_000 }).toMatch(text);
 
 const valueAt = (sheet: Sheet, address: string): CellValue => {
   const [, letter, row] = /^([A-Z])(\d+)$/.exec(address)!;

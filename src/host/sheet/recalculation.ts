@@ -65,7 +65,7 @@ export class Recalculation {
     return this.until(() => !this.isRunning());
   }
 
-  /** Gives up where nothing moves for half a second, or for ten seconds where something is sure to: a sheet that is stuck must not hold up its user. */
+  /** Gives up where nothing moves for half a second, or for two seconds where something is sure to: a sheet that is stuck must not hold up its user. */
   private async until(isOver: () => boolean): Promise<void> {
     let seen = this.session.state;
     for (let looks = 0; !isOver() && looks < this.patience(); looks++) {
@@ -77,7 +77,7 @@ export class Recalculation {
   }
 
   private patience(): number {
-    return this.certain || (this.isRunning() && !this.session.state.stopped) ? 2000 : 100;
+    return this.certain || (this.isRunning() && !this.session.state.stopped) ? 400 : 100;
   }
 
   private isRunning(): boolean {
