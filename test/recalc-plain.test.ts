@@ -10,7 +10,7 @@ import { type Given, planOf } from './support/workbook';
 import { seeded } from './support/random';
 
 const program = path.join(import.meta.dirname, '../dist-cli/recalc.cjs');
-const ROWS = 500;
+const ROWS = 2000;
 
 /** A plan with columns filled down, one that spills, a table of results and a last formula. */
 function plan(bands: number, last: string): Promise<Uint8Array> {
@@ -43,7 +43,7 @@ function ended(run: ChildProcess): Promise<{ code: number | null; output: string
 }
 
 describe('recalc --plain', () => {
-  it('copies a plan of 500 rows, counts what it did on each sheet, and leaves the plan as it was', async () => {
+  it('copies a plan of 2 000 rows, counts what it did on each sheet, and leaves the plan as it was', async () => {
     const before = file('plan.xlsx');
     const { code, output } = await ended(start('plan.xlsx', '--plain', '--out', 'plain.xlsx'));
     expect(code).toBe(0);
