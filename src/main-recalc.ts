@@ -266,7 +266,8 @@ class Progress {
 }
 
 for (const [signal, code] of [['SIGINT', 130], ['SIGTERM', 143]] as const) {
-  process.once(signal, () => {
+  // Not once: a second signal would end the program before the file is removed.
+  process.on(signal, () => {
     if (unfinished !== null) rmSync(unfinished, { force: true });
     process.exit(code);
   });
