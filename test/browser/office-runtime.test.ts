@@ -9,11 +9,14 @@ import type { Workbook } from '../../src/host/port';
 import type { FunctionMetadata } from '../../src/host/sheet/functions-runtime';
 import { launchBrowser, outputFile, siteFile, watch } from '../support/browser';
 import { call } from '../support/built-functions';
-import { FULL_CALLS, asCells } from '../support/full-calls';
 import { evaluate } from '../support/evaluate';
+import { FULL_CALLS, asCells } from '../support/full-calls';
 import { contractWorkbook } from '../support/host-contract';
+import { SHAPES } from '../support/plan-shapes';
 import { type Outcome, type WebHost, openInWebHost } from '../support/played-excel/web-host';
 import { WorkbookModel } from '../support/played-excel/workbook-model';
+import { pngSize } from '../support/png';
+import { testWholeJob } from '../support/whole-job';
 import { planOf } from '../support/workbook';
 
 const BASE = 'https://plan.example/tools/foldplan';
@@ -147,98 +150,58 @@ describe('the worksheet functions in the real runtime', () => {
 });
 
 describe('the pane in the real runtime', () => {
-  const plan: Workbook = {
-    ...contractWorkbook,
-    sheets: [{
-      ...contractWorkbook.sheets[0]!,
-      cells: {
-        0: { 0: { value: 'Beacon' }, 1: { value: 60 }, 2: { value: 90 } },
-        1: { 0: { value: 'Relay' }, 1: { value: 110 }, 2: { value: 120 } },
-        2: { 0: { value: 'rate' }, 1: { value: 100 } },
-      },
-    }],
-    names: { Fold_Name: 'Plan!$A$1:$A$2', Fold_Low: 'Plan!$B$1:$B$2', Fold_High: 'Plan!$C$1:$C$2', Fold_Rate: 'Plan!$B$3' },
-  };
   let host: WebHost;
-  afterEach(() => host?.close());
-
-  it('draws the plan of the workbook, follows a new rate and says nothing on the console', async () => {
-    const workbook = played(plan);
-    host = await openInWebHost(browser, site, BASE, workbook);
-    const pane = host.addIn.locator('#pane');
-    await pane.getByText('Beacon').first().waitFor();
-    await host.page.screenshot({ path: outputFile('pane-in-web-host.png') });
-    workbook.range('Fold_Rate')!.Formulas = [[250]];
-    await expect.poll(() => pane.innerText(), { timeout: 20_000 }).toContain('250');
-    expect(host.watched).toEqual({ console: [], strayRequests: [] });
-  });
-});
-
-describe('the sections of the pane in the real runtime', () => {
-  const bands = [['Airband', 118, 137], ['AIS', 161.9625, 162.0375]] as const;
-  const header = "Low [MHz] 'x' #1";
-  const unset: Workbook = planOf([['Sample rate', 245.76, 'MHz'], ['Guard', 0.5, 'MHz'], [], ['Name', 'Low edge', 'High edge'], ...bands.map((band) => [...band])]);
-  let host: WebHost;
-  let workbook: WorkbookModel;
   afterEach(async () => {
     expect(host.watched).toEqual({ console: [], strayRequests: [] });
     await host.close();
   });
 
-  const pane = () => host.addIn.locator('#pane');
-  const expectPane = (text: string | RegExp) => expect.poll(() => pane().innerText(), { timeout: 20_000 }).toMatch(text);
-  const press = (name: string) => pane().getByRole('button', { name, exact: true }).click();
-  const openSection = (name: string) => pane().getByRole('tab', { name, exact: true }).click();
-
-  async function setUp(): Promise<void> {
+  testWholeJob('the real client library, with the program played', async ({ rows, table }) => {
+    const workbook = new WorkbookModel(planOf(rows), evaluate);
+    if (table) workbook.Tables.put('Bands', workbook.range(table)!);
     host = await openInWebHost(browser, site, BASE, workbook);
-    await expectPane(/Found on the sheet Plan, 2 rows/);
-    await press('Use this plan');
-    await expectPane('The plan is stored in the workbook.');
-    expect(workbook.Names.refersTo).toEqual({
-      Fold_Name: 'Plan!$A$5:$A$6', Fold_Low: 'Plan!$B$5:$B$6', Fold_High: 'Plan!$C$5:$C$6', Fold_Rate: 'Plan!$B$1', Fold_Guard: 'Plan!$B$2',
-    });
-    await openSection('Columns');
-    for (const result of ['Zone', 'Inverted']) await pane().getByRole('checkbox', { name: new RegExp(`^${result}`) }).uncheck();
-  }
-
-  it('set a plan up, insert columns beside it, and take both back', async () => {
-    workbook = new WorkbookModel(structuredClone(unset), evaluate);
-    const before = workbook.snapshot();
-    await setUp();
-    const stored = workbook.snapshot();
-    await press('Insert 4 columns');
-    await expectPane('Inserted 4 columns at D4:G6.');
-    expect(workbook.range('Plan!D4:G5')!.Formulas).toEqual([
-      ['Folded low', 'Folded high', 'Margin', 'Check'],
-      ['=FOLD.LOW(B5,C5,Fold_Rate)', '=FOLD.HIGH(B5,C5,Fold_Rate)', '=FOLD.MARGIN(B5,C5,Fold_Rate,Fold_Guard)', '=FOLD.CHECK(B5,C5,Fold_Rate,Fold_Guard)'],
-    ]);
-    expect(workbook.range('Plan!D5:D6')!.Values).toEqual(bands.map(([, low, high]) => [call('LOW', low, high, 245.76)[0]![0]]));
-    await host.page.screenshot({ path: outputFile('pane-columns-in-web-host.png') });
-    await press('Undo');
-    await expectPane('Undone: the workbook is as it was before.');
-    expect(workbook.snapshot()).toEqual(stored);
-    await openSection('Plan');
-    await press('Undo');
-    await expectPane('Undone: the workbook is as it was before.');
-    expect(workbook.snapshot()).toEqual(before);
+    const pane = host.addIn.locator('#pane');
+    const enter = async (cell: string, text: string) => {
+      workbook.range(`Plan!${cell}`)!.Formulas = [[text]];
+    };
+    return {
+      page: host.page,
+      pane,
+      hasTables: true,
+      enter,
+      async takeBack(step) {
+        if ('cell' in step) return enter(step.cell, step.before);
+        await pane.getByRole('tab', { name: step.section, exact: true }).click();
+        await pane.getByRole('button', { name: step.button, exact: true }).click();
+      },
+      held: async () => ({ everything: workbook.snapshot(), names: workbook.Names.refersTo, cell: (row, column) => workbook.sheets[0]!.at(row, column) }),
+    };
   });
 
-  it('give a structured table columns with its column names, and say what they show', async () => {
-    workbook = new WorkbookModel(structuredClone(unset), evaluate);
-    workbook.Tables.put('Bands', workbook.range('Plan!A4:C6')!);
-    await setUp();
-    workbook.range('Plan!B4')!.Formulas = [[header]];
-    expect(await pane().getByRole('radio', { name: 'columns of the table Bands' }).isChecked()).toBe(true);
-    await expectPane('Insert 4 columns');
-    await press('Insert 4 columns');
-    // The model of the workbook computes no structured references.
-    await expectPane('D5 shows #NAME?: the worksheet functions, or a name in the formula, are not known here. So do 7 cells more.');
-    expect(workbook.Tables.all[0]!.range.Address).toBe('Plan!A4:G6');
-    expect(workbook.range('Plan!D5')!.Formulas).toEqual([["=FOLD.LOW([@[Low '[MHz'] ''x'' '#1]],[@[High edge]],Fold_Rate)"]]);
-    await press('Undo');
-    await expectPane('Undone: the workbook is as it was before.');
-    expect(workbook.Tables.all[0]!.range.Address).toBe('Plan!A4:C6');
+  const TOLD: Record<string, unknown> = {
+    'zone ladder': 'Zone ladder of 3 bands at a rate of 280. 280 does not work. Airband and Amateur overlap by 3, at 134 to 136. Airband and AIS overlap by 0.0375, at 118 to 118.0375.',
+    'rate ruler': expect.stringMatching(/^Rate ruler from .* to .*, at a rate of 280\. \d+ ranges of rates in view are usable\. Those with most headroom are about /),
+  };
+
+  it('puts pictures on the sheet where the selection begins, told in words for those who do not see them', async () => {
+    const [, { rows, names }] = SHAPES[0]!;
+    const workbook = new WorkbookModel(planOf(rows, names), evaluate);
+    host = await openInWebHost(browser, site, BASE, workbook);
+    const pane = host.addIn.locator('#pane');
+    const { Shapes: shapes } = workbook.sheets[0]!;
+    const before = workbook.snapshot();
+    workbook.select(workbook.range('Plan!B9:C12')!);
+    for (const picture of ['zone ladder', 'rate ruler']) {
+      await pane.getByRole('group', { name: `Take out the ${picture}` }).getByRole('button', { name: 'Insert in the sheet' }).click();
+      await expect.poll(() => pane.innerText(), { timeout: 20_000 }).toContain('The picture stands at Plan!B9.');
+      await expect.poll(() => shapes.all.length).toBe(1);
+      const [shape] = shapes.all;
+      expect(shape).toMatchObject({ Left: 48, Top: 8 * 15, AltTextDescription: TOLD[picture] });
+      expect(pngSize(Buffer.from(shape!.base64, 'base64'))).toEqual([shape!.Width, shape!.Height].map((points) => 2 * points / 0.75)); // twice the pixels that it takes on the sheet
+      shape!.Delete();
+      expect(workbook.snapshot()).toEqual(before);
+    }
+    await host.page.screenshot({ path: outputFile('pane-in-web-host.png') });
   });
 });
 

@@ -3,7 +3,7 @@
 import type { CellValue } from '../../src/host/port';
 import { FunctionError, callFunction } from '../../src/host/sheet/functions-runtime';
 import { built } from './built-functions';
-import type { Evaluate } from './played-excel/workbook-model';
+import type { Evaluate } from './played-excel/formula-model';
 
 export const evaluate: Evaluate = (name, args) => {
   const given = args.map((rows) => rows && rows.map((row) => row.map((one) => (typeof one === 'object' && one ? { code: one.error } : one))));

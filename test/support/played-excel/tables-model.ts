@@ -1,6 +1,8 @@
 // Structured tables of the played workbook.
 
+import { parseStructRef } from '@borgar/fx';
 import { ProgramError, Served, ServedList } from './batch';
+import { inside } from './boxes';
 import { RangeModel, type WorksheetModel } from './workbook-model';
 
 export class TablesModel extends ServedList<TableModel> {
@@ -9,6 +11,14 @@ export class TablesModel extends ServedList<TableModel> {
   /** Makes a table of cells that are there. */
   put(name: string, range: RangeModel): void {
     this.all.push(new TableModel(name, range));
+  }
+
+  /** The cell that a formula of this cell means by a column of its own table: `[@[Low edge]]`. */
+  inRow({ box, Worksheet: sheet }: RangeModel, reference: string): RangeModel | undefined {
+    const table = this.all.find(({ range }) => range.Worksheet === sheet && inside(range.box, box));
+    const { columns = [], sections = [] } = parseStructRef(reference) ?? {};
+    const at = table && sections[0] === 'this row' ? table.titles.indexOf(columns[0]!) : -1;
+    return at < 0 ? undefined : new RangeModel(sheet, { ...box, column: table!.range.box.column + at });
   }
 
   protected found(key: string): TableModel | undefined {
@@ -33,6 +43,10 @@ export class TableModel extends Served {
 
   GetRange(): RangeModel {
     return this.range;
+  }
+
+  get titles(): string[] {
+    return this.range.Values[0]!.map(String);
   }
 
   GetDataBodyRange(): RangeModel {

@@ -4,14 +4,12 @@
 
 import { type CellValue, type Sheet, type Workbook, NEGATIVE } from '../../../src/host/port';
 import { ProgramError, Served, ServedList } from './batch';
+import { type Evaluate, compute } from './formula-model';
 import { ColumnModel, ConditionalFormatsModel, RangeFormatModel, type Mark } from './looks-model';
 import { NotesModel } from './notes-model';
 import { ShapesModel } from './shapes-model';
 import { TablesModel } from './tables-model';
 import { type Box, boxAddress, cellBox, inside, parseAddress, place } from './boxes';
-
-/** Computes `=FOLD.NAME(reference, …)`: rows of cells, an error as an object. */
-export type Evaluate = (name: string, args: (CellValue[][] | null)[]) => CellValue[][];
 
 export interface WorkbookEvent {
   type: typeof CHANGED | typeof CALCULATED | typeof SELECTED | typeof ACTIVATED;
@@ -124,21 +122,14 @@ export class WorkbookModel extends Served {
   }
 
   private compute(sheet: WorksheetModel, key: string, cell: CellModel): void {
-    const [, name, list] = /^=FOLD\.([A-Z]+)\((.*)\)$/.exec(cell.formula!) ?? [];
-    if (!name) {
-      cell.value = { error: '#NAME?' };
-      return;
-    }
-    const args = list!.split(',').map((arg) => this.argument(sheet, arg.trim()));
-    sheet.fill(key, this.evaluate(name, args));
+    sheet.fill(key, compute(cell.formula!, this.evaluate, (reference) => this.referredTo(sheet, key, reference)?.cells(({ value }) => (value === '' ? null : value))));
   }
 
-  private argument(sheet: WorksheetModel, text: string): CellValue[][] | null {
-    if (text === '') return null;
-    if (text !== '' && Number.isFinite(Number(text))) return [[Number(text)]];
-    const isLocal = !text.includes('!') && this.Names.refersTo[text] === undefined;
-    const range = this.range(isLocal ? `'${sheet.Name.replaceAll("'", "''")}'!${text}` : text);
-    return range ? range.cells((cell) => (cell.value === '' ? null : cell.value)) : [[{ error: '#NAME?' }]];
+  /** The cells that a reference means in a formula. */
+  private referredTo(sheet: WorksheetModel, key: string, reference: string): RangeModel | undefined {
+    if (reference.startsWith('[')) return this.Tables.inRow(new RangeModel(sheet, cellBox(...place(key))), reference);
+    const isLocal = !reference.includes('!') && this.Names.refersTo[reference] === undefined;
+    return this.range(isLocal ? `'${sheet.Name.replaceAll("'", "''")}'!${reference}` : reference);
   }
 
   private tell(event: WorkbookEvent): void {
