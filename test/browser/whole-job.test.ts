@@ -4,7 +4,7 @@ import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, expect, it } from 'vitest';
 import { type Site, type Watched, launchBrowser, serveSite, watch } from '../support/browser';
 import { testWholeJob } from '../support/whole-job';
-import { enter, goTo, openWorkbook, saved } from '../support/workbench-page';
+import { enter, goTo, openWorkbook, saved, startWorkbench } from '../support/workbench-page';
 import { planOf } from '../support/workbook';
 
 let browser: Browser;
@@ -16,8 +16,7 @@ beforeAll(async () => {
   [browser, site] = await Promise.all([launchBrowser(), serveSite()]);
   page = await browser.newPage({ viewport: { width: 1400, height: 900 } });
   watched = watch(page, site.address);
-  await page.goto(`${site.address}/workbench.html`);
-  await page.getByText(/^A demo plan/).waitFor({ timeout: 40_000 });
+  await startWorkbench(page, site.address);
 });
 afterAll(async () => {
   await browser.close();

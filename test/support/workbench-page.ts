@@ -6,13 +6,22 @@ import { expect } from 'vitest';
 import { readWorkbook, writeWorkbook } from '../../src/host/file';
 import type { Workbook } from '../../src/host/port';
 
+export async function startWorkbench(page: Page, address: string): Promise<void> {
+  await page.goto(`${address}/workbench.html`);
+  await page.getByText(/^A demo plan/).waitFor({ timeout: 40_000 });
+}
+
 let opened = 0;
 
-/** Opens a file in a workbench whose own workbook is saved. */
+/** Opens a file, whatever becomes of the workbook that is open. */
 export async function openWorkbook(page: Page, workbook: Workbook): Promise<void> {
   const name = `plan ${++opened}.xlsx`; // its own, so that what is said of it is new
   await page.locator('#chosen-file').setInputFiles({ name, mimeType: 'application/octet-stream', buffer: Buffer.from(await writeWorkbook(workbook)) });
-  await expect.poll(() => page.locator('#status').innerText(), { timeout: 40_000 }).toMatch(`Opened ${name}`);
+  const discard = page.getByRole('button', { name: 'Open without saving' });
+  await expect.poll(async () => {
+    if (await discard.isVisible()) await discard.click();
+    return page.locator('#status').innerText();
+  }, { timeout: 40_000 }).toMatch(`Opened ${name}`);
 }
 
 export async function goTo(page: Page, cell: string): Promise<void> {

@@ -20,6 +20,16 @@ export function compute(formula: string, evaluate: Evaluate, cells: Cells): Cell
   return name === undefined ? UNKNOWN : evaluate(name, args.map((argument) => argument && valueOf(argument, cells)));
 }
 
+/** Whether the program takes a formula. */
+export function isFormula(text: string): boolean {
+  try {
+    read(text);
+    return true;
+  } catch {
+    return false;
+  }
+}
+
 /** Each formula is read once: the workbook computes all of them after every edit. */
 function read(formula: string): AstExpression {
   if (!known.has(formula)) known.set(formula, parse(tokenize(formula)));

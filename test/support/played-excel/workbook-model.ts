@@ -4,7 +4,7 @@
 
 import { type CellValue, type Sheet, type Workbook, NEGATIVE } from '../../../src/host/port';
 import { ProgramError, Served, ServedList } from './batch';
-import { type Evaluate, compute } from './formula-model';
+import { type Evaluate, compute, isFormula } from './formula-model';
 import { ColumnModel, ConditionalFormatsModel, RangeFormatModel, type Mark } from './looks-model';
 import { NotesModel } from './notes-model';
 import { ShapesModel } from './shapes-model';
@@ -537,7 +537,7 @@ function typed(input: unknown, format: string): CellModel {
   if (input.startsWith("'")) return { value: input.slice(1), format };
   if (format === '@') return { value: input, format };
   if (input.startsWith('=')) {
-    if (input.split('(').length !== input.split(')').length) throw new ProgramError('InvalidArgument', 'The formula is not correct.');
+    if (!isFormula(input)) throw new ProgramError('InvalidArgument', 'The formula is not correct.');
     return { value: '', formula: input, format };
   }
   if (input.trim() !== '' && Number.isFinite(Number(input))) return { value: Number(input), format };
