@@ -4,6 +4,7 @@
 import type { Locator, Page } from 'playwright-core';
 import { describe, expect, it } from 'vitest';
 import type { CellValue } from '../../src/host/port';
+import { outputFile } from './browser';
 import { call } from './built-functions';
 import { BANDS, OBJECTIONS, RATE, SHAPES, type Shape, USABLE } from './plan-shapes';
 
@@ -41,6 +42,7 @@ export function testWholeJob(host: string, open: (shape: Shape) => Promise<Stage
       const button = (name: string) => pane.getByRole('button', { name, exact: true });
       const openSection = (name: string) => pane.getByRole('tab', { name, exact: true }).click();
       const expectPane = (text: string | RegExp) => expect.poll(() => pane.innerText(), PATIENCE).toMatch(text);
+      const expectNoFault = async () => expect(await pane.getByRole('alert').allTextContents()).toEqual(['']);
       const expectPictures = (rate: number, candidate = rate) => expect.poll(() => picturesIn(pane), PATIENCE).toEqual(duePictures(shape, rate, candidate));
       const states: unknown[] = [];
       const remember = async () => states.push((await stage.held()).everything);
@@ -74,6 +76,8 @@ export function testWholeJob(host: string, open: (shape: Shape) => Promise<Stage
       await expectPictures(TYPED_RATE, chosen);
       expect(await textsIn(pane.getByRole('table', { name: 'What changes' }).getByRole('row'))).toEqual(dueChanges(shape, TYPED_RATE, chosen));
       expect((await stage.held()).everything).toEqual(states.at(-1));
+      if (what === DRAGGED_ON) await stage.page.screenshot({ path: outputFile(`whole-job-in-${host.replaceAll(' ', '-')}.png`) });
+      await expectNoFault();
       await button('Use this rate').click();
       await expectPane(`The rate cell was set to ${chosen}; before, it held ${TYPED_RATE}.`);
       await expectPictures(chosen);
@@ -92,6 +96,7 @@ export function testWholeJob(host: string, open: (shape: Shape) => Promise<Stage
       await expectState();
       await openSection('Plan');
       await expectPane(/Found on the sheet Plan, 3 rows/);
+      await expectNoFault();
     });
   });
 }
@@ -127,6 +132,7 @@ async function dragCandidate({ page, pane }: Stage): Promise<number> {
   const rate = Number(await handle.getAttribute('aria-valuenow'));
   expect(rate).toBeGreaterThan(USABLE.from);
   expect(rate).toBeLessThan(USABLE.to);
+  expect(await pane.locator('.stage + .readout').textContent()).toBe(`${rate} lies in the usable range ${USABLE.from} to ${USABLE.to}.`);
   return rate;
 }
 

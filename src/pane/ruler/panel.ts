@@ -214,14 +214,14 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
     if (drag.kind === 'candidate') {
       event.preventDefault();
       handle.place.focus({ preventScroll: true });
-      choose(rateAt(rateOf(event), ranges(), reach(), grid()));
+      dragTo(event);
     }
   });
   stage.addEventListener('pointermove', (event) => {
     if (!layout) return;
-    if (drag?.kind === 'candidate') choose(rateAt(rateOf(event), ranges(), reach(), grid()));
+    if (drag?.kind === 'candidate') dragTo(event);
     else if (drag) look(pannedRates(drag.window, (drag.x - event.clientX) / (layout.right - layout.left)));
-    else tellOf(rateOf(event));
+    else tellOf(rateAt(rateOf(event), ranges(), reach(), { step: null }));
   });
   for (const end of ['pointerup', 'pointercancel'] as const) stage.addEventListener(end, () => { drag = null; });
   stage.addEventListener('pointerleave', () => { if (!drag) readout.textContent = hint(); });
@@ -238,10 +238,15 @@ export function rulerPanel(surroundings: Surroundings, stands: (rate: number, ru
   const inWindow = (rate: number) => Math.min(Math.max(rate, window().from), window().to);
   const hint = () => (settings.step === null ? ruler.hint : `${ruler.hint} ${ruler.stepHint(exactFigure(settings.step))}`);
 
-  function tellOf(point: number): void {
+  function dragTo(event: MouseEvent): void {
+    const rate = rateAt(rateOf(event), ranges(), reach(), grid());
+    choose(rate);
+    tellOf(rate);
+  }
+
+  function tellOf(rate: number): void {
     const { value } = findings;
     if (!value || !rules) return;
-    const rate = rateAt(point, value.ranges, reach(), { step: null });
     const range = rangeOf(rate, value.ranges);
     const against = range || !value.found ? [] : forbidding(value.found, rate);
     const some = against.slice(0, 3).map((one) => ruleWords(one, rules!, 'inWords'));

@@ -54,7 +54,7 @@ export function playWebHost({ addIn, usageReports }: { addIn: string; usageRepor
   const context = {
     _id: instance, _appName: 16, _appVersion: '16.0', _appUILocale: 'en-US', _dataLocale: 'en-US', _docUrl: 'Plan.xlsx', _clientMode: 1, _settings: [],
     _reason: 'documentOpened', _osfControlType: 1, _correlationId: 'correlation', _appInstanceId: instance,
-    _requirementMatrix: JSON.stringify({ ExcelApi: 1.17, CustomFunctions: 1.12, CustomFunctionsRuntime: 1.5, SharedRuntime: 1.2, RibbonApi: 1.2 }),
+    _requirementMatrix: JSON.stringify({ ExcelApi: 1.17, CustomFunctions: 1.12, CustomFunctionsRuntime: 1.5, SharedRuntime: 1.2, SharedRuntimeInternal: 1.2, RibbonApi: 1.2 }),
     _hostFullVersion: '16.0.18000.0', _addinName: 'Foldplan', _appDomains: [], _featureGates: {}, _initialDisplayMode: 2,
   };
 

@@ -25,6 +25,7 @@ export interface WebHost {
 /** Objects that the library makes by name. */
 const CUSTOM_FUNCTIONS = 'Microsoft.ExcelServices.CustomFunctions';
 const ADD_IN = 'Microsoft.InternalService.AddinInternalService';
+const START = 'Microsoft.AppRuntime.AppRuntimePersistenceService';
 
 /** Kinds of messages to the add-in. */
 const WORKBOOK_EVENT = 65536;
@@ -36,7 +37,7 @@ const FUNCTION_CALL = 1;
  */
 export async function openInWebHost(browser: Browser, folder: string, base: string, workbook: WorkbookModel, { usageReports = false } = {}): Promise<WebHost> {
   const functions = new CustomFunctionsService();
-  const root: Root = { workbook, made: { [CUSTOM_FUNCTIONS]: functions, [ADD_IN]: new AddInService() }, kept: new Map() };
+  const root: Root = { workbook, made: { [CUSTOM_FUNCTIONS]: functions, [ADD_IN]: new AddInService(), [START]: new StartService() }, kept: new Map() };
   const context = await browser.newContext();
   await context.route('**/*', async (route) => {
     const { origin, pathname } = new URL(route.request().url());
@@ -107,4 +108,9 @@ class CustomFunctionsService extends Served {
 
 class AddInService extends Served {
   NotifyActionHandlerReady(): void {}
+}
+
+/** Where an add-in asks to be started with the workbook. */
+class StartService extends Served {
+  SetAppRuntimeStartState(): void {}
 }
