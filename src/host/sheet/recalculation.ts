@@ -81,7 +81,7 @@ export class Recalculation {
     if (stageInfo) {
       const { stage, completedFormulasCount, totalFormulasToCalculate } = stageInfo;
       this.ending = stage === FormulaExecuteStageType.CALCULATION_COMPLETED;
-      if (stage === FormulaExecuteStageType.CURRENTLY_CALCULATING || this.ending) for (const listener of this.progressListeners) listener(completedFormulasCount, totalFormulasToCalculate);
+      if (stage === FormulaExecuteStageType.CURRENTLY_CALCULATING) for (const listener of this.progressListeners) listener(completedFormulasCount, totalFormulasToCalculate);
     } else if (functionsExecutedState !== undefined && this.ending) {
       this.ending = false;
       this.ended++;
