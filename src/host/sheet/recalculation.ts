@@ -1,62 +1,64 @@
 // When the sheet has recalculated, and what it leaves undone.
 
-import type { ICommandService, IRange, IUnitRange } from '@univerjs/core';
-import { type FormulaDataModel, SetTriggerFormulaCalculationStartMutation } from '@univerjs/engine-formula';
-import type { FormulaCalculationSessionService } from '@univerjs/sheets-formula';
+import type { ICommandInfo, ICommandService, IRange, IUnitRange } from '@univerjs/core';
+import {
+  type FormulaDataModel, type ISetFormulaCalculationNotificationMutation, FormulaExecuteStageType, SetFormulaCalculationNotificationMutation,
+  SetFormulaCalculationStartMutation, SetTriggerFormulaCalculationStartMutation,
+} from '@univerjs/engine-formula';
 
-type State = FormulaCalculationSessionService['state'];
+type Progress = (done: number, total: number) => void;
 
-/** Follows the recalculations of a sheet. Univer numbers them; each begins a tenth of a second after the change that asks for it. */
+/**
+ * Follows the recalculations of a sheet. Each begins a tenth of a second after the change that asks for it, also while another is still
+ * under way: that one is then stopped, or goes on to its end before the new one takes its turn. So both beginnings and ends are counted;
+ * Univer's own account tells the two apart by the latest number, and takes the end of the first for that of the second.
+ */
 export class Recalculation {
-  /** Number of the recalculation that will have seen the last change. */
+  private begun = 0;
+  private ended = 0;
+  /** Whether the one under way has said that nothing is left to compute; its results stand in the cells with the next notice. */
+  private ending = false;
+  /** How many must have begun for one to have seen the last change. */
   private due = 0;
   /** Whether that one is sure to come: a change of styles asks for none. */
   private certain = false;
+  /** Counts all that is heard. */
+  private heard = 0;
+  private readonly doneListeners = new Set<() => void>();
+  private readonly progressListeners = new Set<Progress>();
   private readonly blocks: BlockFollower;
 
-  constructor(private readonly session: FormulaCalculationSessionService, formulas: FormulaDataModel, commands: ICommandService) {
+  constructor(formulas: FormulaDataModel, commands: ICommandService) {
     this.blocks = new BlockFollower(formulas, commands);
+    commands.onCommandExecuted((command) => this.hear(command));
     this.onDone(() => this.blocks.follow());
   }
 
   /** A workbook has been opened, which is certain to be computed. */
   opened(): void {
     this.blocks.forget();
-    this.due = this.session.state.id + 1;
+    this.due = this.begun + 1;
     this.certain = true;
   }
 
   /** A cell, a name or something else has changed. */
   changed(): void {
-    this.due = this.session.state.id + 1;
+    this.due = this.begun + 1;
   }
 
-  /** Calls `listener` once after every recalculation, when its results stand in the cells, until the returned function is called. */
+  /** Calls `listener` when recalculations have come to an end, with their results in the cells, until the returned function is called. */
   onDone(listener: () => void): () => void {
-    let told = this.session.state.id;
-    const subscription = this.session.state$.subscribe((state) => {
-      if (state.id === told || !isDone(state)) return;
-      told = state.id;
-      listener();
-    });
-    return () => subscription.unsubscribe();
+    return addTo(this.doneListeners, listener);
   }
 
   /** Calls `listener` whenever a recalculation has come further, until the returned function is called. */
-  onProgress(listener: (done: number, total: number) => void): () => void {
-    let told = '';
-    const subscription = this.session.state$.subscribe(({ progress }) => {
-      const [done, total] = [progress?.completedFormulasCount ?? 0, progress?.totalFormulasToCalculate ?? 0];
-      if (done === 0 || told === `${done}/${total}`) return;
-      told = `${done}/${total}`;
-      listener(done, total);
-    });
-    return () => subscription.unsubscribe();
+  onProgress(listener: Progress): () => void {
+    return addTo(this.progressListeners, listener);
   }
 
   /** Resolves when everything that has changed so far is computed. */
   async settled(): Promise<void> {
-    await this.until(() => !this.isRunning() && this.session.state.id >= this.due && !this.blocks.pending);
+    await this.until(() => !this.isRunning() && this.begun >= this.due && !this.blocks.pending);
     this.certain = false;
   }
 
@@ -65,31 +67,53 @@ export class Recalculation {
     return this.until(() => !this.isRunning());
   }
 
+  private hear({ id, params }: Readonly<ICommandInfo>): void {
+    if (id === SetFormulaCalculationStartMutation.id) {
+      this.heard++;
+      this.begun++;
+    } else if (id === SetFormulaCalculationNotificationMutation.id) {
+      this.heard++;
+      this.hearNotice(params as ISetFormulaCalculationNotificationMutation);
+    }
+  }
+
+  private hearNotice({ stageInfo, functionsExecutedState }: ISetFormulaCalculationNotificationMutation): void {
+    if (stageInfo) {
+      const { stage, completedFormulasCount, totalFormulasToCalculate } = stageInfo;
+      this.ending = stage === FormulaExecuteStageType.CALCULATION_COMPLETED;
+      if (stage === FormulaExecuteStageType.CURRENTLY_CALCULATING) for (const listener of this.progressListeners) listener(completedFormulasCount, totalFormulasToCalculate);
+    } else if (functionsExecutedState !== undefined && this.ending) {
+      this.ending = false;
+      this.ended++;
+      if (!this.isRunning()) for (const listener of this.doneListeners) listener();
+    }
+  }
+
   /** Gives up where nothing moves for half a second, or for two seconds where something is sure to: a sheet that is stuck must not hold up its user. */
   private async until(isOver: () => boolean): Promise<void> {
-    let seen = this.session.state;
+    let heard = this.heard;
     for (let looks = 0; !isOver() && looks < this.patience(); looks++) {
       await pause();
-      const { state } = this.session;
-      if (state !== seen) looks = 0;
-      seen = state;
+      if (this.heard !== heard) looks = 0;
+      heard = this.heard;
     }
   }
 
   private patience(): number {
-    return this.certain || (this.isRunning() && !this.session.state.stopped) ? 400 : 100;
+    return this.certain || this.isRunning() ? 400 : 100;
   }
 
   private isRunning(): boolean {
-    const { state } = this.session;
-    return state.started && !isDone(state);
+    return this.ended < this.begun;
   }
 }
 
 const pause = () => new Promise((resume) => setTimeout(resume, 5));
 
-/** One that was stopped, for a change that came meanwhile, goes on under its own number or under the next. */
-const isDone = ({ started, resultApplied, completed, resultEmitted, stopped }: State): boolean => started && resultApplied && (completed || resultEmitted) && !stopped;
+function addTo<T>(listeners: Set<T>, listener: T): () => void {
+  listeners.add(listener);
+  return () => listeners.delete(listener);
+}
 
 /**
  * A formula may fill a block of cells. Univer follows such blocks two deep in one recalculation: a block made from a block that is made

@@ -7,7 +7,6 @@ import { FormulaDataModel } from '@univerjs/engine-formula';
 import {
   ScrollToCellOperation, SelectionMoveType, SetSelectionsOperation, SetWorksheetActiveOperation, SheetsSelectionsService, getPrimaryForRange,
 } from '@univerjs/sheets';
-import { FormulaCalculationSessionService } from '@univerjs/sheets-formula';
 import type { Block, CellError, CellInput, CellValue, Change, FormulaBlock, LiveHost, Place, Table, Workbook } from '../port';
 import { type CellRange, formatRange } from './address';
 import { makeChange } from './changes';
@@ -205,7 +204,7 @@ export class SheetHost implements LiveHost {
   /** Univer's services for sheets exist once there is a sheet. */
   private get recalculation(): Recalculation {
     if (!this.calculation) {
-      const calculation = new Recalculation(this.get(FormulaCalculationSessionService), this.get(FormulaDataModel), this.get(ICommandService));
+      const calculation = new Recalculation(this.get(FormulaDataModel), this.get(ICommandService));
       this.calculation = calculation;
       this.followEdits(() => calculation.changed());
     }
