@@ -1,62 +1,44 @@
 // The built workbench page in a real browser, driven as a user drives it: by keyboard, by files, by what stands on the page.
 
 import { readFile } from 'node:fs/promises';
-import type { Browser, BrowserContext, Page } from 'playwright-core';
+import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { coastPlan } from '../../src/demo/coast';
 import { readWorkbook, writeWorkbook } from '../../src/host/file';
 import type { CellValue, Sheet, Workbook } from '../../src/host/port';
 import { calculate } from '../../src/host/sheet/calculate';
 import { type Site, type Watched, launchBrowser, outputFile, serveSite, watch } from '../support/browser';
 import { built, call } from '../support/built-functions';
+import { enter as enterInto, goTo as goToCell, openWorkbook, startWorkbench } from '../support/workbench-page';
 import { planOf, sheetOf } from '../support/workbook';
 
 let browser: Browser;
 let site: Site;
-/** What most tests share: a browser that has loaded the site before reads it from its cache. */
-let shared: BrowserContext;
-let context: BrowserContext;
 let page: Page;
 let watched: Watched;
 
-const WIDE = { viewport: { width: 1400, height: 850 } };
+/** Starts the workbench and waits until the demo plan is computed. */
+async function start(): Promise<void> {
+  const context = await browser.newContext({ viewport: { width: 1400, height: 850 } }); // which outlives an attempt to leave the page
+  page = await context.newPage();
+  watched = watch(page, site.address);
+  await startWorkbench(page, site.address);
+}
 
 beforeAll(async () => {
   [browser, site] = await Promise.all([launchBrowser(), serveSite()]);
-  shared = await browser.newContext(WIDE);
+  await start();
 });
 afterAll(async () => {
   await browser.close();
   await site.close();
 });
-
-/** Opens the workbench and waits until the demo plan is computed. */
-async function open(options?: Parameters<Browser['newContext']>[0]): Promise<void> {
-  context = options ? await browser.newContext({ ...WIDE, ...options }) : shared;
-  page = await context.newPage();
-  watched = watch(page, site.address);
-  await page.goto(`${site.address}/workbench.html`);
-  await expectText('#status', /^A demo plan/);
-}
-
-beforeEach(() => open());
-afterEach(async () => {
-  await (context === shared ? page.close() : context.close());
-  expect(watched).toEqual({ console: [], strayRequests: [] });
-});
+afterEach(() => expect(watched).toEqual({ console: [], strayRequests: [] }));
 
 // What a user does
 
-async function goTo(cell: string): Promise<void> {
-  const nameBox = page.getByLabel('Selected cell');
-  await nameBox.fill(cell);
-  await nameBox.press('Enter');
-}
-
-async function enter(cell: string, text: string): Promise<void> {
-  await goTo(cell);
-  await page.keyboard.type(text);
-  await page.keyboard.press('Enter');
-}
+const goTo = (cell: string) => goToCell(page, cell);
+const enter = (cell: string, text: string) => enterInto(page, cell, text);
 
 /** Saves, and reads the file that came out. */
 async function saved(): Promise<{ name: string; bytes: Uint8Array; workbook: Workbook }> {
@@ -107,6 +89,10 @@ describe('the workbench', () => {
     await expectText('#pane', '409.6');
     await page.screenshot({ path: outputFile('workbench-wide.png') });
   });
+});
+
+describe('a plan in the workbench', () => {
+  beforeEach(() => openWorkbook(page, coastPlan()));
 
   it('follows the rate cell: every FOLD column, the lists on the other sheets, and the picture', async () => {
     await enter('B3', '575');
@@ -160,6 +146,11 @@ describe('the workbench', () => {
 });
 
 describe('files in the workbench', () => {
+  let name: string;
+  beforeEach(async () => {
+    name = await openWorkbook(page, coastPlan());
+  });
+
   const styled: Workbook = {
     ...planOf([
       [{ value: 'Rate', style: { bold: true, fill: '#dfe9ee' } }, { value: 245.76, style: { numberFormat: '0.000' } }, '007', '=1+1'],
@@ -200,22 +191,22 @@ describe('files in the workbench', () => {
 
   it('says why a file cannot be opened, and keeps the sheet', async () => {
     const before = (await saved()).workbook;
-    for (const [name, content] of [['letter.xlsx', 'Dear colleague'], ['half.xlsx', (await writeWorkbook(styled)).slice(0, 900)]] as const) {
-      await choose(name, content);
-      await expectText('#status', new RegExp(`^${name.replace('.', '\\.')}`));
+    for (const [file, content] of [['letter.xlsx', 'Dear colleague'], ['half.xlsx', (await writeWorkbook(styled)).slice(0, 900)]] as const) {
+      await choose(file, content);
+      await expectText('#status', new RegExp(`^${file.replace('.', '\\.')}`));
       expect(await page.locator('#status').getAttribute('data-kind')).toBe('fault');
-      expect(await page.locator('#file-name').textContent()).toBe('Gannet Ness.xlsx');
+      expect(await page.locator('#file-name').textContent()).toBe(name);
     }
     expect((await saved()).workbook).toEqual(before);
   });
 
   it('asks before changes are lost, and warns when the page is left', async () => {
     await enter('B4', '0.5');
-    await expectText('#file-name', 'Gannet Ness.xlsx, changed');
+    await expectText('#file-name', `${name}, changed`);
     const bytes = await writeWorkbook(styled);
     await choose('next.xlsx', bytes);
     await page.getByRole('button', { name: 'Keep working' }).click();
-    expect(await page.locator('#file-name').textContent()).toBe('Gannet Ness.xlsx, changed');
+    expect(await page.locator('#file-name').textContent()).toBe(`${name}, changed`);
     const leaving = page.waitForEvent('dialog');
     await page.close({ runBeforeUnload: true });
     const warning = await leaving;
@@ -227,16 +218,17 @@ describe('files in the workbench', () => {
   });
 
   it('saves a plain copy beside the workbook: the same values, and not one FOLD formula', async () => {
+    const plain = name.replace('.xlsx', ' plain.xlsx');
     const before = await saved();
     const [download] = await Promise.all([page.waitForEvent('download'), page.getByRole('button', { name: 'Save plain copy' }).click()]);
-    expect(download.suggestedFilename()).toBe('Gannet Ness plain.xlsx');
+    expect(download.suggestedFilename()).toBe(plain);
     const { workbook } = await readWorkbook(new Uint8Array(await readFile(await download.path())));
     const formulas = workbook.sheets.flatMap((sheet) => Object.values(sheet.cells).flatMap((line) => Object.values(line).flatMap(({ formula }) => (formula === undefined ? [] : [formula]))));
     expect(formulas.length).toBeGreaterThan(70);
     expect(formulas.filter((formula) => formula.includes('FOLD'))).toEqual([]);
     expect(workbook.sheets.map(({ name }) => name)).toEqual([...before.workbook.sheets.map(({ name }) => name), 'Plain copy']);
     expect(foldedInSheet(workbook.sheets[0]!)).toEqual(foldedInSheet(before.workbook.sheets[0]!));
-    await expectText('#status', 'Saved Gannet Ness plain.xlsx among your downloads: 78 FOLD formulas made native, 5 others made values. Its last sheet lists them.');
+    await expectText('#status', `Saved ${plain} among your downloads: 78 FOLD formulas made native, 5 others made values. Its last sheet lists them.`);
   });
 
   it('counts as changed what is changed, not what is looked at, and as saved what is saved', async () => {
@@ -245,11 +237,11 @@ describe('files in the workbench', () => {
     await page.keyboard.press('F2');
     await page.keyboard.press('Escape');
     await page.locator('#sheet').getByRole('tab', { name: 'Plan' }).click();
-    expect(await page.locator('#file-name').textContent()).toBe('Gannet Ness.xlsx');
+    expect(await page.locator('#file-name').textContent()).toBe(name);
     await enter('B4', '0.5');
     await expectText('#file-name', 'changed');
     await saved();
-    expect(await page.locator('#file-name').textContent()).toBe('Gannet Ness.xlsx');
+    expect(await page.locator('#file-name').textContent()).toBe(name);
   });
 
   it('tells which formulas of a file it cannot compute', async () => {
@@ -259,6 +251,11 @@ describe('files in the workbench', () => {
 });
 
 describe('the workbench for everyone', () => {
+  beforeAll(async () => {
+    await page.close();
+    await start();
+  });
+
   it('goes from part to part with F6, and saves with Ctrl+S', async () => {
     const focused = () => page.evaluate(() => ['pane', 'open', 'sheet'].find((id) => document.getElementById(id)!.contains(document.activeElement)));
     const visited = [];

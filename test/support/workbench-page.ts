@@ -13,8 +13,8 @@ export async function startWorkbench(page: Page, address: string): Promise<void>
 
 let opened = 0;
 
-/** Opens a file, whatever becomes of the workbook that is open. */
-export async function openWorkbook(page: Page, workbook: Workbook): Promise<void> {
+/** Opens a file, whatever becomes of the workbook that is open. Gives its name. */
+export async function openWorkbook(page: Page, workbook: Workbook): Promise<string> {
   const name = `plan ${++opened}.xlsx`; // its own, so that what is said of it is new
   await page.locator('#chosen-file').setInputFiles({ name, mimeType: 'application/octet-stream', buffer: Buffer.from(await writeWorkbook(workbook)) });
   const discard = page.getByRole('button', { name: 'Open without saving' });
@@ -22,6 +22,7 @@ export async function openWorkbook(page: Page, workbook: Workbook): Promise<void
     if (await discard.isVisible()) await discard.click();
     return page.locator('#status').innerText();
   }, { timeout: 40_000 }).toMatch(`Opened ${name}`);
+  return name;
 }
 
 export async function goTo(page: Page, cell: string): Promise<void> {
