@@ -1,9 +1,9 @@
-// Random rows in portions, each row with its native formula. Every portion begins in row 1 again, so that most of its formulas are those of
-// the portion before: they are converted once, and the embedded sheet parses them once.
+// Rows in portions, each row with its native formula. Every portion begins in row 1 again, so that most of its formulas are those of the
+// portion before: they are converted once, and the embedded sheet parses them once.
 
 import { plainCopy, workbookSource } from '../../src/plain';
 import { sheetOf } from '../support/workbook';
-import { type Row, randomRows } from './random-rows';
+import type { Row } from './random-rows';
 
 /** Rows with their cells in columns A to F. */
 export interface Portion {
@@ -14,10 +14,9 @@ export interface Portion {
 
 const ROWS = 250;
 
-export async function portionsOf(id: string, count: number, seed: number, digits?: number): Promise<Portion[]> {
-  const all = randomRows(id, count, seed, digits);
+export async function portionsOf(id: string, all: Row[]): Promise<Portion[]> {
   const portions: Portion[] = [];
-  for (let first = 0; first < count; first += ROWS) {
+  for (let first = 0; first < all.length; first += ROWS) {
     const rows = all.slice(first, first + ROWS);
     portions.push({ rows, formulas: await nativeFormulas(rows.map((row, r) => `=FOLD.${id}(${row.map((value, c) => argument(value, r, c)).join(',')})`)) });
   }
