@@ -20,12 +20,13 @@ export const MINRATE: Equivalent = {
       const { low, high } = seen(a, b, 'real');
       const ratio = settled(`${kind === 'iq' ? '2*' : ''}(${low}${plus(g.value, `-${g.value}`)})${late}/${spread}`);
       const upperEdge = kind === 'iq' ? `2*INT((INT(MAX(0,${ratio}))+1)/2)+1` : `INT(MAX(0,${ratio}))+1`;
-            // A zone that fits at a single rate counts where a cell can hold that rate. Without a tolerance it is a multiple of the spread, a
+      // A zone that fits at a single rate counts where a cell can hold that rate. Without a tolerance it is a multiple of the spread, a
       // decimal; with one it seldom is, so it counts where it has up to 9 digits.
       const isSingle = kind === 'iq' ? `ISODD(${ratio}),${ratio}=INT(${ratio})` : `${ratio}=INT(${ratio})`;
       const single = `${kind === 'iq' ? '' : '2*'}${spread}/(1-(${t.value})^2)`;
-      const endless = `ROUND(${single},8-INT(LOG10(${single})))<>ROUND(${single},14-INT(LOG10(${single})))`;
-      const skipped = t.value === null ? '' : `-IF(AND(${ratio}>0,${isSingle},${endless}),${kind === 'iq' ? 2 : 1},0)`;
+      const endless = `ABS(ROUND(${single},8-INT(LOG10(${single})))-${single})>2E-15*${single}`;
+      const isOff = typeof ppm.literal === 'number' ? '' : `${t.value}>0,`;
+      const skipped = t.value === null ? '' : `-IF(AND(${isOff}${ratio}>0,${isSingle},${endless}),${kind === 'iq' ? 2 : 1},0)`;
       const rate = `IF(${spread}=0,${NONE},2*(${high}${plus(g.value, `+${g.value}`)})/((${upperEdge}${skipped})${late}))`;
       if (kind === 'iq') return rate;
       const holdsZero = typeof a.literal === 'number' && a.literal >= 0 ? null : `${low}<0`;
