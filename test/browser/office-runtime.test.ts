@@ -1,13 +1,12 @@
 // The built site in the spreadsheet program's own, unmodified runtime, under a page that plays the program on the web.
 
-import { execFileSync } from 'node:child_process';
 import { readFileSync } from 'node:fs';
 import path from 'node:path';
 import type { Browser } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import type { Workbook } from '../../src/host/port';
 import type { FunctionMetadata } from '../../src/host/sheet/functions-runtime';
-import { launchBrowser, outputFile, siteFile, watch } from '../support/browser';
+import { launchBrowser, siteFile, watch } from '../support/browser';
 import { call } from '../support/built-functions';
 import { evaluate } from '../support/evaluate';
 import { FULL_CALLS, asCells } from '../support/full-calls';
@@ -16,19 +15,15 @@ import { SHAPES } from '../support/plan-shapes';
 import { type Outcome, type WebHost, openInWebHost } from '../support/played-excel/web-host';
 import { WorkbookModel } from '../support/played-excel/workbook-model';
 import { pngSize } from '../support/png';
+import { selfHosted } from '../support/self-hosted';
 import { testWholeJob } from '../support/whole-job';
 import { planOf } from '../support/workbook';
 
-const BASE = 'https://plan.example/tools/foldplan';
-const site = outputFile('self-hosted');
+const { base: BASE, folder: site } = selfHosted;
 
 let browser: Browser;
 let functions: FunctionMetadata[];
 beforeAll(async () => {
-  execFileSync('npx', [
-    'webpack', '--config-name', 'functions', '--config-name', 'site', '--env', 'development', '--env', 'officejs=self', '--env', `base=${BASE}`,
-    '-o', site, '--stats', 'errors-only',
-  ], { stdio: 'inherit' });
   functions = JSON.parse(readFileSync(path.join(site, 'functions.json'), 'utf8')).functions;
   browser = await launchBrowser();
 });

@@ -1,7 +1,7 @@
 // A site that was built for one address and carries its own Office.js, served from another by the example server, over https and below the host.
 
-import { type ChildProcess, execFileSync, spawn, spawnSync } from 'node:child_process';
-import { copyFileSync, mkdirSync, mkdtempSync, readFileSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
+import { type ChildProcess, spawn, spawnSync } from 'node:child_process';
+import { mkdtempSync, readFileSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
 import type { IncomingMessage } from 'node:http';
 import { request } from 'node:https';
 import { tmpdir } from 'node:os';
@@ -9,12 +9,12 @@ import path from 'node:path';
 import { generateCertificates } from 'office-addin-dev-certs';
 import type { Browser } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
-import { dist, launchBrowser, outputFile, watch } from '../support/browser';
+import { launchBrowser, watch } from '../support/browser';
+import { selfHosted } from '../support/self-hosted';
 
 const root = path.join(import.meta.dirname, '../..');
-const BASE = 'https://plans.example.test';
-const PATH = '/tools/fold';
-const site = outputFile('site');
+const PATH = new URL(selfHosted.base).pathname;
+const site = selfHosted.folder;
 const certificates = mkdtempSync(path.join(tmpdir(), 'foldplan-'));
 const certificate = (name: string) => path.join(certificates, name);
 
@@ -25,11 +25,6 @@ let server: ChildProcess;
 let port: number;
 let browser: Browser;
 beforeAll(async () => {
-  rmSync(site, { recursive: true, force: true });
-  mkdirSync(site, { recursive: true });
-  // The functions and their help are the same in every build, but for the address in functions.json: they need not be built again.
-  for (const file of ['functions.js', 'functions.json', 'help.html', 'search.js']) copyFileSync(path.join(dist, file), path.join(site, file));
-  execFileSync('npx', ['webpack', '--config-name', 'site', '--env', 'development', '--env', 'officejs=self', '--env', `base=${BASE}`, '-o', site, '--stats', 'errors-only'], { cwd: root, stdio: 'inherit' });
   const quiet = vi.spyOn(console, 'log').mockReturnValue();
   await generateCertificates(certificate('ca.crt'), certificate('site.crt'), certificate('site.key'), 2);
   quiet.mockRestore();
