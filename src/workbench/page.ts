@@ -11,8 +11,8 @@ export interface Page {
   complain(sentence: string): void;
   /** The selected cell: what screen readers say of it, and for everyone the sentence behind its error, where it has one. */
   showCell(spoken: string, error: string | null): void;
-  /** While something takes its time, nothing can be opened or saved. */
-  busy(on: boolean): void;
+  /** While something takes its time, nothing can be opened or saved. `giveUp` is offered to the user where something can be given up. */
+  busy(on: boolean, giveUp?: () => void): void;
   /** Asks before changes are lost; resolves to whether they may be. */
   mayDiscard(question: string): Promise<boolean>;
   /** Hands a file to the user. */
@@ -29,13 +29,16 @@ export interface Actions {
 
 export function workbenchPage(document: Document, actions: Actions): Page {
   const byId = <T extends HTMLElement>(id: string) => document.getElementById(id) as T;
-  const [openButton, saveButton, savePlainButton] = ['open', 'save', 'save-plain'].map((id) => byId<HTMLButtonElement>(id)) as [HTMLButtonElement, HTMLButtonElement, HTMLButtonElement];
+  const [openButton, saveButton, savePlainButton, cancelButton] = ['open', 'save', 'save-plain', 'cancel']
+    .map((id) => byId<HTMLButtonElement>(id)) as [HTMLButtonElement, HTMLButtonElement, HTMLButtonElement, HTMLButtonElement];
   const [status, cellError] = [byId('status'), byId('cell-error')];
   const [sheet, pane] = [byId('sheet'), byId('pane')];
 
   takeFiles(document, byId<HTMLInputElement>('chosen-file'), byId('drop-hint'), openButton, (file) => actions.open(file));
   saveButton.addEventListener('click', () => actions.save());
   savePlainButton.addEventListener('click', () => actions.savePlain());
+  let giveUp: (() => void) | undefined;
+  cancelButton.addEventListener('click', () => giveUp?.());
   takeKeys(document, [openButton, sheet, pane], () => openButton.click(), () => saveButton.click());
   document.defaultView!.addEventListener('beforeunload', (event) => {
     if (actions.unsaved()) event.preventDefault();
@@ -59,8 +62,13 @@ export function workbenchPage(document: Document, actions: Actions): Page {
       renew(byId('cell'), spoken);
       renew(cellError, error ?? '');
     },
-    busy(on) {
+    busy(on, how) {
+      const focused = [savePlainButton, cancelButton].some((button) => button === document.activeElement);
+      giveUp = how;
+      cancelButton.hidden = !how;
+      savePlainButton.hidden = Boolean(how);
       for (const button of [openButton, saveButton, savePlainButton]) button.disabled = on;
+      if (focused) (how ? cancelButton : savePlainButton).focus();
     },
     mayDiscard(question) {
       const dialog = byId<HTMLDialogElement>('discard');

@@ -13,6 +13,7 @@ export const sentences = {
   saved: (file: string) => `Saved ${file} among your downloads.`,
   savedPlain: (file: string, formulas: number, values: number) =>
     `Saved ${file} among your downloads: ${count(formulas, 'FOLD formula')} made native, ${count(values, 'other')} made values. Its last sheet lists them.`,
+  cancelled: 'Cancelled: no file was made.',
   looking: (done: number, total: number) => `Plain copy: looked at ${done} of ${total} formulas.`,
   cannotSave: (file: string) => `${file} could not be saved.`,
   mayDiscard: (file: string, next: string) => `${file} has changes that are not saved. Open ${next} all the same?`,

@@ -231,6 +231,25 @@ describe('files in the workbench', () => {
     await expectText('#status', `Saved ${plain} among your downloads: 78 FOLD formulas made native, 5 others made values. Its last sheet lists them.`);
   });
 
+  it('makes no file where a plain copy is cancelled, and the next one is whole', async () => {
+    const downloads: string[] = [];
+    const note = (download: { suggestedFilename(): string }) => void downloads.push(download.suggestedFilename());
+    page.on('download', note);
+    const saving = page.getByRole('button', { name: 'Save plain copy' });
+    await saving.focus();
+    await page.evaluate(() => {
+      document.getElementById('save-plain')!.click();
+      (document.activeElement as HTMLElement).click(); // which has become the button that cancels
+    });
+    await expectText('#status', 'Cancelled: no file was made.');
+    expect(await saving.evaluate((button) => button === document.activeElement)).toBe(true);
+    expect(downloads).toEqual([]);
+    await saving.click();
+    await expectText('#status', /^Saved .* plain\.xlsx .*: 78 FOLD formulas made native/);
+    expect(downloads).toEqual([name.replace('.xlsx', ' plain.xlsx')]);
+    page.off('download', note);
+  });
+
   it('counts as changed what is changed, not what is looked at, and as saved what is saved', async () => {
     await page.getByRole('tab', { name: 'Rates and images' }).click();
     await goTo('A6');
@@ -281,7 +300,7 @@ describe('the workbench for everyone', () => {
   it('fits a window 320 pixels wide', async () => {
     await page.setViewportSize({ width: 320, height: 640 });
     await expect.poll(() => page.evaluate(() => document.documentElement.scrollWidth)).toBe(320);
-    for (const button of await page.locator('.bar button, .bar a').all()) {
+    for (const button of await page.locator('.bar button:visible, .bar a:visible').all()) {
       const box = (await button.boundingBox())!;
       expect(box.x + box.width).toBeLessThanOrEqual(320);
     }
