@@ -1,7 +1,6 @@
 // The embedded sheet with its window: cells, formula bar and tabs inside an element of a page.
 
 import { LocaleType, LogLevel, ThemeService, Univer, mergeLocales } from '@univerjs/core';
-import { LexerTreeBuilder } from '@univerjs/engine-formula';
 import { UniverSheetsConditionalFormattingPreset } from '@univerjs/preset-sheets-conditional-formatting';
 import marksEnUS from '@univerjs/preset-sheets-conditional-formatting/locales/en-US';
 import '@univerjs/preset-sheets-conditional-formatting/lib/index.css';
@@ -13,7 +12,7 @@ import notesEnUS from '@univerjs/preset-sheets-note/locales/en-US';
 import '@univerjs/preset-sheets-note/lib/index.css';
 import { CalculationMode } from '@univerjs/sheets-formula';
 import { defaultTheme } from '@univerjs/themes';
-import { FormulaLexer } from './formula-lexer';
+import { correct } from './corrections';
 import { suggestNames } from './formula-suggestions';
 import type { WorksheetFunctions } from './functions-runtime';
 import { nameControls } from './labels';
@@ -40,7 +39,7 @@ export function openEmbedded(functions: WorksheetFunctions, container: HTMLEleme
     if (Array.isArray(plugin)) univer.registerPlugin(plugin[0], plugin[1]);
     else univer.registerPlugin(plugin);
   }
-  univer.__getInjector().replace([LexerTreeBuilder, { useClass: FormulaLexer }]);
+  correct(univer);
   void suggestNames(univer);
   nameControls(container);
   const theme = univer.__getInjector().get(ThemeService);

@@ -1,12 +1,12 @@
 // The embedded sheet without a window: the formula engine and the workbook, in Node.
 
 import { LocaleType, LogLevel, Univer } from '@univerjs/core';
-import { LexerTreeBuilder, UniverFormulaEnginePlugin } from '@univerjs/engine-formula';
+import { UniverFormulaEnginePlugin } from '@univerjs/engine-formula';
 import { UniverSheetsPlugin } from '@univerjs/sheets';
 import { UniverSheetsConditionalFormattingPlugin } from '@univerjs/sheets-conditional-formatting';
 import { CalculationMode, UniverSheetsFormulaPlugin } from '@univerjs/sheets-formula';
 import { UniverSheetsNotePlugin } from '@univerjs/sheets-note';
-import { FormulaLexer } from './formula-lexer';
+import { correct } from './corrections';
 import type { WorksheetFunctions } from './functions-runtime';
 import { SheetHost } from './sheet-host';
 import { type Listener, univerFunctions } from './univer-functions';
@@ -19,6 +19,6 @@ export function openHeadless(functions: WorksheetFunctions): SheetHost {
   univer.registerPlugin(UniverSheetsFormulaPlugin, { initialFormulaComputing: CalculationMode.FORCED });
   univer.registerPlugin(UniverSheetsNotePlugin);
   univer.registerPlugin(UniverSheetsConditionalFormattingPlugin);
-  univer.__getInjector().replace([LexerTreeBuilder, { useClass: FormulaLexer }]);
+  correct(univer);
   return new SheetHost(univer, listener);
 }

@@ -142,6 +142,19 @@ describe('a workbook recalculated without a window', () => {
     ])).toEqual([[70, 30], [80, 20]]);
   });
 
+  // A blank cell is equal to 0 and to "", which are not equal to each other: common practice.
+  it('compares cells as spreadsheet programs do, whatever they were compared with before', async () => {
+    const cells = [[0], [null], [5], ['x']];
+    const asked = ['=5', '=""', '=0', '="x"', '<>""', '<>0'];
+    const computed = await calculate(planOf(cells.map(([cell], row) => [cell!, ...asked.map((question) => `=A${row + 1}${question}`)])), built);
+    expect(cells.map((_, row) => asked.map((_question, i) => computed.sheets[0]!.cells[row]![i + 1]!.value))).toEqual([
+      [false, false, true,  false, true,  false],
+      [false, true,  true,  false, false, false],
+      [true,  false, false, false, true,  true],
+      [false, false, false, true,  true,  true],
+    ]);
+  });
+
   it('touches nothing but values', async () => {
     const before = planOf([[{ value: 'low', style: { bold: true, fill: '#dfe9ee' } }, 61.44], [null, { value: null, formula: '=FOLD.FREQ(B1,Rate)', style: { numberFormat: '0.000' } }]], { Rate: 'Plan!$B$1' });
     Object.assign(before.sheets[0]!, { columns: { 0: { width: 120 } }, rows: { 1: { height: 31 } }, merges: ['A3:B3'], frozen: { rows: 1, columns: 1 } });
