@@ -104,7 +104,7 @@ describe('the pane by keyboard alone', () => {
     await goTo('pane');
     await tabTo('Use this plan');
     await page.keyboard.press('Enter');
-    await expectPane('The plan is stored in the workbook.');
+    await expectPane('Stored the plan in the workbook.');
 
     await goTo('pane');
     await tabTo('Plan');

@@ -154,7 +154,7 @@ describe('the rate ruler in the workbench', () => {
     await expectText('.stage + .readout', /lies in the usable range 571\.165756648467 to 577\.034959300813\.$/);
     await page.mouse.move(usable.x - 10, usable.y + 4);
     await expectText('.stage + .readout', /is forbidden by .*Airband voice against/);
-    await page.getByText('All 3 usable ranges in view').click();
+    await page.getByText('The 3 usable ranges in view').click();
     expect(await page.locator('[data-keep="ranges"] tbody tr').first().locator('td').allTextContents()).toEqual(['571.165756648467', '577.034959300813', '5.869202652346', '574.10035797464', '5110']);
   });
 });

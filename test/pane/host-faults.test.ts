@@ -117,7 +117,7 @@ describe('setting a plan up', () => {
   it('says that undo failed, and does not offer it twice', async () => {
     await start(planSection, {});
     await open.press('Use this plan');
-    await expect.poll(() => open.told.news).toMatch(/stored/);
+    await expect.poll(() => open.told.news).toMatch(/Stored/);
     await open.host.write('Plan!A1', [['other']]);
     await open.host.change({ names: { Fold_Low: 'Plan!$B$6' } });
     await open.press('Undo');

@@ -50,7 +50,7 @@ export function testWholeJob(host: string, open: (shape: Shape) => Promise<Stage
       await remember();
       await expectPane(/Found on the sheet Plan, 3 rows/);
       await button('Use this plan').click();
-      await expectPane('The plan is stored in the workbook.');
+      await expectPane('Stored the plan in the workbook.');
       expect((await stage.held()).names).toEqual(shape.names);
 
       await remember();

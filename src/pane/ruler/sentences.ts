@@ -54,7 +54,7 @@ export const sentences = {
 
   // Tables
 
-  tableSummary: (ranges: number) => (ranges === 1 ? 'The usable range in view' : `All ${ranges} usable ranges in view`),
+  tableSummary: (ranges: number) => (ranges === 1 ? 'The usable range in view' : `The ${ranges} usable ranges in view`),
   tableShown: (shown: number, all: number) => `The first ${shown} of ${all} are listed; zoom in for the others.`,
   tableCaption: (from: string, to: string) => `Usable rates from ${from} to ${to}`,
   columns: ['Lowest rate', 'Highest rate', 'Width', 'Centre', 'Headroom ppm'],

@@ -48,7 +48,7 @@ export const sentences = {
   notFound: 'No plan was found: no headers name low and high edges, centres and widths, or frequencies. Select the cells of each column and press “Use selection”.',
   stored: 'This is the plan that the workbook holds.',
   changed: 'Changed, and not stored yet.',
-  applied: 'The plan is stored in the workbook.',
+  applied: 'Stored the plan in the workbook.',
   extended: (row: number) => `The plan now reaches down to row ${row}.`,
   undone: 'Undone: the workbook is as it was before.',
   ambiguous: (edge: string, taken: string, other: string) => `The header in ${other} would do for the ${edge === 'low' ? 'low edge' : 'centre'} as well; ${taken} was taken.`,

@@ -29,7 +29,7 @@ describe('the section Plan', () => {
     expect(field('Low edges').value).toBe('B6:B7');
     expect(open.text()).toContain('headed “Low (MHz)” in B5, in MHz');
     await press('Use this plan');
-    await said().toEqual({ news: 'The plan is stored in the workbook.', fault: '' });
+    await said().toEqual({ news: 'Stored the plan in the workbook.', fault: '' });
     expect(await host.names()).toEqual(STORED);
     expect(open.text()).toContain('This is the plan that the workbook holds.');
     await press('Undo');
@@ -49,7 +49,7 @@ describe('the section Plan', () => {
     await press('Use selection for high edges');
     await expect.poll(() => field('High edges').value).toBe('D2:D3');
     await press('Use this plan');
-    await said().toMatchObject({ news: 'The plan is stored in the workbook.' });
+    await said().toMatchObject({ news: 'Stored the plan in the workbook.' });
     expect(await host.names()).toMatchObject({ Fold_High: 'Plan!$D$2:$D$3', Fold_Rate: 'Plan!$B$5' });
   });
 
@@ -67,7 +67,7 @@ describe('the section Plan', () => {
     type('Centres', 'D3');
     type('Widths', 'Plan!$E$3');
     await press('Use this plan');
-    await said().toMatchObject({ news: 'The plan is stored in the workbook.' });
+    await said().toMatchObject({ news: 'Stored the plan in the workbook.' });
     expect(await host.names()).toEqual({ Fold_Centre: 'Plan!$D$3', Fold_Width: 'Plan!$E$3', Fold_Rate: 'Plan!$B$1' });
   });
 
@@ -81,7 +81,7 @@ describe('the section Plan', () => {
     await press('New cell for guard');
     await expect.poll(() => open.text()).toMatch(/“Sample rate”, and the value will be written to A3:C3(.|\n)*“Guard”, and the value will be written to A4:C4/);
     await press('Use this plan');
-    await said().toMatchObject({ news: 'The plan is stored in the workbook.' });
+    await said().toMatchObject({ news: 'Stored the plan in the workbook.' });
     expect(await values('Plan!A1:C6')).toEqual([['A title', null, null], [null, null, null], ['Sample rate', 409.6, 'MHz'], ['Guard', 0, 'MHz'], [null, null, null], ['Low (MHz)', 'High (MHz)', null]]);
     expect(await host.names()).toEqual({ Fold_Low: 'Plan!$A$7', Fold_High: 'Plan!$B$7', Fold_Rate: 'Plan!$B$3', Fold_Guard: 'Plan!$B$4' });
     await press('Undo');
@@ -95,7 +95,7 @@ describe('the section Plan', () => {
     await expect.poll(() => open.text()).toContain('will be written to F1:H1');
     type('Sample rate to begin with', '100');
     await press('Use this plan');
-    await said().toMatchObject({ news: 'The plan is stored in the workbook.' });
+    await said().toMatchObject({ news: 'Stored the plan in the workbook.' });
     expect(await host.names()).toMatchObject({ Fold_Rate: 'Plan!$G$1' });
   });
 });
