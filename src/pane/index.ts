@@ -28,7 +28,7 @@ const BURST = 30;
 
 /**
  * Draws the pane into an element and keeps it true to the workbook, until the returned function is called.
- * Colours follow the system; `data-theme="light"` or `"dark"` on the element, or above it, decides otherwise.
+ * Colours follow the system; `data-theme="light"` or `"dark"` on the element decides otherwise.
  */
 export async function mountPane(host: LiveHost, root: HTMLElement, version: string): Promise<() => void> {
   const document = root.ownerDocument;
