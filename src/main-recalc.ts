@@ -129,7 +129,7 @@ function readArguments(args: string[]): Job | 'help' {
   if (values.help) return 'help';
   if (positionals.length === 0) throw new Refusal('Name the workbook to recalculate, such as plan.xlsx; --help shows more.');
   if (positionals.length > 1) throw new Refusal(`Name one workbook, not ${positionals.length}: ${positionals.join(', ')}.`);
-  if (!values.out) throw new Refusal('Say where the result goes, such as --out done.xlsx; it may be the workbook itself.');
+  if (!values.out) throw new Refusal(`Say where the result goes, such as --out done.xlsx${values.plain ? '' : '; it may be the workbook itself'}.`);
   if (values.out.length > 1) throw new Refusal('Name one file with --out.');
   const [input, output] = [resolve(positionals[0]!), resolve(values.out[0]!)];
   const kind = (file: string) => /\.xl(s|sx|sm|tx|tm|sb)$/i.exec(file)?.[0].toLowerCase();

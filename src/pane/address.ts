@@ -10,7 +10,8 @@ export interface Box {
 
 /** Rows of a sheet. */
 export const MOST_ROWS = 1_048_576;
-const MOST_COLUMNS = 16_384;
+/** Columns of a sheet. */
+export const MOST_COLUMNS = 16_384;
 
 /** The sheet of a reference, null where it names none, and its cells; null where the text is no address of cells. */
 export function parseReference(reference: string): { sheet: string | null; box: Box } | null {

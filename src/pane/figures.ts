@@ -1,7 +1,7 @@
 // What a plan comes to at its rate: the engine's figures of every row, where each band stands zone by zone, and what speaks
 // against the rate. Pure, and exact wherever a figure is shown.
 
-import { Fault, bandCheck, bandGap, bandInverted, bandMargin, bandZone, foldedFrequency, frequencyZone, imageHigh, imageLow } from '../engine';
+import { Fault, bandCheck, bandGap, bandInverted, bandMargin, bandZone, conflicts, foldedFrequency, frequencyZone, imageHigh, imageLow } from '../engine';
 import type { Plan, PlanRow } from './plan';
 import { sentences } from './sentences';
 
@@ -13,6 +13,8 @@ export interface PlanFigures {
   bands: BandFigures[];
   /** Pairs of bands, at least one of them wanted, whose images overlap or keep less than the guard; the worst first. */
   pairs: Pair[];
+  /** Where there are no such pairs: those that become one within the tolerance of the clock, each at its worst; the worst first. */
+  drifting: Pair[];
 }
 
 export interface RowFigures {
@@ -80,7 +82,8 @@ export function figuresOf(plan: Plan): PlanFigures {
     }
   });
   const bands = rows.flatMap(({ band }) => (band ? [band] : []));
-  return { plan, rows, bands, pairs: plan.rate === null ? [] : pairsTooNear(bands, plan.rate, plan.guard) };
+  const pairs = plan.rate === null ? [] : pairsTooNear(bands, plan.rate, plan.guard);
+  return { plan, rows, bands, pairs, drifting: plan.rate === null || pairs.length > 0 ? [] : pairsWithinTolerance(bands, plan.rate, plan) };
 }
 
 function bandFigures(row: PlanRow, number: number, rate: number, guard: number, ppm: number): BandFigures {
@@ -153,10 +156,20 @@ function pairsTooNear(bands: BandFigures[], rate: number, guard: number): Pair[]
       if (band.row.role !== 'wanted' && other.row.role !== 'wanted') continue;
       const gap = bandGap(band.low, band.high, other.low, other.high, rate);
       if (gap >= 0 && gap >= guard) continue;
-      const [first, second] = band.number < other.number ? [band, other] : [other, band];
-      const inner = [Math.max(band.imageLow, other.imageLow), Math.min(band.imageHigh, other.imageHigh)] as const;
-      pairs.push({ first, second, gap, low: Math.min(...inner), high: Math.max(...inner) });
+      pairs.push(pairOf(band, other, gap));
     }
   });
   return pairs.sort((a, b) => a.gap - b.gap || a.first.number - b.first.number || a.second.number - b.second.number);
+}
+
+function pairsWithinTolerance(bands: BandFigures[], rate: number, { guard, ppm }: Plan): Pair[] {
+  if (ppm === 0 || bands.every(({ row }) => row.role !== 'wanted')) return [];
+  const plan = { low: bands.map(({ low }) => low), high: bands.map(({ high }) => high), role: bands.map(({ row }) => row.role), guard, harmonics: 1, cores: 1, sampling: 'real' as const };
+  return conflicts(plan, rate, ppm).flatMap(({ kind, band, against, gap }) => (kind === 'band' ? [pairOf(bands[band]!, bands[against!]!, gap)] : []));
+}
+
+function pairOf(one: BandFigures, other: BandFigures, gap: number): Pair {
+  const [first, second] = one.number < other.number ? [one, other] : [other, one];
+  const inner = [Math.max(one.imageLow, other.imageLow), Math.min(one.imageHigh, other.imageHigh)] as const;
+  return { first, second, gap, low: Math.min(...inner), high: Math.max(...inner) };
 }

@@ -78,6 +78,7 @@ export function planFrom(cells: PlanCells): Plan {
   plan.ppm = readAllowance(NAMES.ppm, 'the clock tolerance', cells.ppm, 1e6, sentences.ppmRange, notices);
   if (cells.guard === null) notices.push(sentences.noGuard);
   if (cells.name === null) notices.push(sentences.noNames);
+  if (cells.role === null) notices.push(sentences.noRoles);
   plan.rows = readRows(cells, edges, notices);
   return plan;
 }

@@ -37,6 +37,7 @@ export const sentences = {
   noPlan: 'No plan is set up in this workbook yet: choose its cells under Plan.',
   missing: (names: NameOfPlan[]) => `The plan lacks ${list(names.map(({ stands, name }) => `${stands} (${name})`))}; choose ${names.length === 1 ? 'it' : 'them'} under Plan.`,
   noNames: 'No column of band names is chosen, so bands are called by their row; choose one under Plan.',
+  noRoles: 'No column of roles is chosen, so every band counts as wanted; choose one under Plan.',
   noGuard: 'No cell is chosen for the guard, so it is taken as 0; choose one under Plan.',
   noBands: 'The plan holds no numbers yet; fill in the edges of a band, and the figures appear here.',
   noneReadable: 'No row of the plan can be drawn; the rows below say why.',
@@ -95,7 +96,6 @@ export const sentences = {
   allowance: (guard: string, ppm: string) => `${guard}, ±${ppm} ppm`,
   marginOf: (margin: string, name: string) => `${margin} (${name})`,
   asFarAsRead: (rows: number) => (rows === 1 ? 'One row could not be read.' : `${rows} rows could not be read.`),
-  nominalGaps: (rate: string) => `Margins hold over the clock tolerance; gaps between images are those at exactly ${rate}.`,
 
   // What speaks against it
 
@@ -104,6 +104,8 @@ export const sentences = {
   tooWide: (name: string, margin: string) => `${name} is too wide for any zone of this rate: its margin is ${margin}.`,
   overlap: (first: string, second: string, by: string, low: string, high: string) =>
     `${first} and ${second} overlap by ${by}, at ${low === high ? low : `${low} to ${high}`}.`,
+  drift: (first: string, second: string, gap: string, ppm: string) =>
+    `${first} and ${second} come nearer than the guard within ±${ppm} ppm of the clock: ${gap.startsWith('-') ? `they overlap by ${gap.slice(1)}` : `${gap} apart`} at worst.`,
   near: (first: string, second: string, gap: string, guard: string) => `${first} and ${second} are ${gap} apart, less than the guard of ${guard}.`,
   andMore: (count: number) => `${count} more`,
 

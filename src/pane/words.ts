@@ -20,16 +20,16 @@ export interface Headline {
 export const verdictOf = (figures: PlanFigures): string =>
   ({ open: sentences.nothingWanted, fails: sentences.fails, narrowly: sentences.worksNarrowly, works: sentences.works }[outcomeOf(figures)](exactFigure(figures.plan.rate!)));
 
-function outcomeOf({ bands, pairs }: PlanFigures): Headline['outcome'] {
+function outcomeOf({ bands, pairs, drifting }: PlanFigures): Headline['outcome'] {
   const states = bands.filter(({ row }) => row.role === 'wanted').map(({ state }) => state);
   if (states.length === 0) return 'open';
   if (pairs.some(({ gap }) => gap < 0) || states.some((state) => state === 'crosses' || state === 'too wide')) return 'fails';
-  return pairs.length > 0 || states.includes('tight') ? 'narrowly' : 'works';
+  return pairs.length + drifting.length > 0 || states.includes('tight') ? 'narrowly' : 'works';
 }
 
 /** For a plan whose rate is known. */
 export function headline(figures: PlanFigures): Headline {
-  const { plan, rows, bands, pairs } = figures;
+  const { plan, rows, bands, pairs, drifting } = figures;
   const wanted = bands.filter(({ row }) => row.role === 'wanted');
   const count = (...states: BandFigures['state'][]) => wanted.filter(({ state }) => states.includes(state)).length;
   const overlaps = pairs.filter(({ gap }) => gap < 0).length;
@@ -38,7 +38,7 @@ export function headline(figures: PlanFigures): Headline {
   const smallest = wanted.reduce<BandFigures | null>((least, band) => (least === null || band.margin < least.margin ? band : least), null);
   const unread = rows.length - bands.length;
   const { facts } = sentences;
-  const objections = [...wanted.filter(({ state }) => state !== 'clear').map(bandObjection), ...pairs.map((pair) => pairObjection(pair, plan.guard))];
+  const objections = [...wanted.filter(({ state }) => state !== 'clear').map(bandObjection), ...pairs.map((pair) => pairObjection(pair, plan.guard)), ...drifting.map((pair) => driftObjection(pair, plan.ppm))];
   return {
     outcome,
     verdict: verdictOf(figures),
@@ -55,10 +55,7 @@ export function headline(figures: PlanFigures): Headline {
     ],
     against: objections.length,
     objections: objections.sort((a, b) => a.severity - b.severity || a.by - b.by).slice(0, OBJECTIONS_TOLD).map(({ sentence }) => sentence()),
-    remarks: [
-      ...(unread > 0 ? [sentences.asFarAsRead(unread)] : []),
-      ...(plan.ppm > 0 && pairs.length === 0 && outcome !== 'open' ? [sentences.nominalGaps(rate)] : []),
-    ],
+    remarks: unread > 0 ? [sentences.asFarAsRead(unread)] : [],
   };
 }
 
@@ -95,3 +92,6 @@ function pairObjection({ first, second, gap, low, high }: Pair, guard: number): 
     ? { severity: 0, by: gap, sentence: () => sentences.overlap(...names(), exactFigure(-gap), exactFigure(low), exactFigure(high)) }
     : { severity: 1, by: gap - guard, sentence: () => sentences.near(...names(), exactFigure(gap), exactFigure(guard)) };
 }
+
+const driftObjection = ({ first, second, gap }: Pair, ppm: number): Objection =>
+  ({ severity: 1, by: gap, sentence: () => sentences.drift(isolated(first.row.name), isolated(second.row.name), exactFigure(gap), exactFigure(ppm)) });

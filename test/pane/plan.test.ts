@@ -47,6 +47,15 @@ describe('a plan', () => {
     expect(plan.rows[0]).toMatchObject({ low, high, problem, usable: problem === null, place: 'B2' });
   });
 
+  it('without columns for names and roles and a cell for the guard says what it takes instead', async () => {
+    const { Fold_Low, Fold_High, Fold_Rate } = NAMES;
+    expect((await read(planOf(ROWS, { Fold_Low, Fold_High, Fold_Rate }))).notices).toEqual([
+      'No cell is chosen for the guard, so it is taken as 0; choose one under Plan.',
+      'No column of band names is chosen, so bands are called by their row; choose one under Plan.',
+      'No column of roles is chosen, so every band counts as wanted; choose one under Plan.',
+    ]);
+  });
+
   it('of tones has one column for both edges', async () => {
     const plan = await read(planOf([['Tone', 'f'], ['a', 70], ['fs', 100]], { Fold_Low: 'Plan!$B$2', Fold_High: 'Plan!$B$2', Fold_Rate: 'Plan!$B$3' }));
     expect(plan.rows.map(({ low, high }) => [low, high])).toEqual([[70, 70]]);

@@ -1,7 +1,7 @@
 // The section Columns: results for every row of the plan, chosen, previewed, and inserted in one step that can be undone.
 
 import { HostFault } from '../../host/port';
-import { type Box, addressOf, cellBox, columnLetters, parseAddress, referenceTo } from '../address';
+import { type Box, MOST_COLUMNS, addressOf, cellBox, columnLetters, parseAddress, referenceTo } from '../address';
 import { attempts } from '../attempt';
 import { type Tree, element, toDom } from '../element';
 import type { PlanFigures } from '../figures';
@@ -160,6 +160,7 @@ export const columnsSection: MakeSection = (surroundings) => {
     if (wantedWay() === 'table' || chosen === '') return null;
     const column = columnFrom(chosen);
     if (column === null) return sentences.notColumn(chosen);
+    if (column + wantedResults().length > MOST_COLUMNS) return sentences.noRoom(columnLetters(column), wantedResults().length, columnLetters(MOST_COLUMNS - 1));
     const met = meetsPlan(figures!.plan.table!, { row: 0, rows: 1, column, columns: wantedResults().length });
     return met === null ? null : sentences.holdsPlan(met);
   }

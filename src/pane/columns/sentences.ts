@@ -41,6 +41,7 @@ export const sentences = {
   notColumn: (text: string) => `The first column must be letters such as K, or a cell such as K7; got “${[...text].slice(0, 40).join('')}”.`,
   otherSheet: (sheet: string) => `The columns go beside the plan, on the sheet ${sheet}; select a cell there.`,
   nothingSelected: 'No cells are selected; select some in the sheet first.',
+  noRoom: (letters: string, count: number, last: string) => `From column ${letters} on there is no room for ${count} columns: the sheet ends with ${last}. Choose another first column.`,
   holdsPlan: (letters: string) => `Column ${letters} holds the plan itself; choose another first column.`,
   taken: (cells: string[], more: number) => `${cells.join(', ')}${more > 0 ? ` and ${counted(more, 'cell')} more` : ''} ${cells.length + more === 1 ? 'holds' : 'hold'} something already.`,
   notWritten: (sentence: string) => `Nothing was written: ${sentence}`,

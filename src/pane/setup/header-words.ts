@@ -25,10 +25,15 @@ export function columnOf(header: string): Header<ColumnKind> | null {
   return meaning(header, COLUMNS, NOISE);
 }
 
-/** The single cell that a label names, or null. */
+/** The single cell that a label names, or null. What is given in parts of something is no frequency: `Clock (ppm)` is a tolerance. */
 export function cellOf(label: string): Header<CellKind> | null {
-  return meaning(label, CELLS, []);
+  const found = meaning(label, CELLS, []);
+  if (!found || found.kind === 'ppm' || !isRelative(unitOf(label))) return found;
+  return found.kind === 'rate' ? { kind: 'ppm', weak: true } : null;
 }
+
+/** Whether a unit is one of parts of something. */
+export const isRelative = (unit: string | null): boolean => RELATIVE_UNITS.some((one) => one === unit);
 
 function meaning<Kind>(text: string, table: Map<string, Header<Kind>>, noise: readonly string[]): Header<Kind> | null {
   const words = wordsOf(split(text).words);
@@ -61,7 +66,8 @@ for (const prefix of ['', 'k', 'M', 'G', 'T']) {
   UNITS.set(`${prefix}hz`.toLowerCase(), `${prefix}Hz`);
   for (const samples of ['S/s', 'sps', 'SPS', 'sa/s']) UNITS.set(`${prefix}${samples}`.toLowerCase(), `${prefix}S/s`);
 }
-for (const unit of ['ppm', 'ppb', '%']) UNITS.set(unit, unit);
+const RELATIVE_UNITS = ['ppm', 'ppb', '%'];
+for (const unit of RELATIVE_UNITS) UNITS.set(unit, unit);
 
 /** Units of samples per second go with those of frequency. */
 export const frequencyUnit = (unit: string | null): string | null => unit?.replace('S/s', 'Hz') ?? null;

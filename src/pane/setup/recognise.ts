@@ -3,7 +3,7 @@
 import type { Block, CellValue, Place } from '../../host/port';
 import { type Box, addressOf, cellBox, holdsBox, parseAddress, parseReference } from '../address';
 import type { NameKey } from '../sentences';
-import { type CellKind, type ColumnKind, cellOf, columnOf, frequencyUnit, isUnit, unitOf } from './header-words';
+import { type CellKind, type ColumnKind, cellOf, columnOf, frequencyUnit, isRelative, isUnit, unitOf } from './header-words';
 import { sentences } from './sentences';
 
 export interface Found extends Place {
@@ -42,9 +42,11 @@ export function recogniseCells(blocks: Block[], names: Record<string, string>): 
 export function unitProblems(found: Proposal['found']): string[] {
   const frequencies = (['low', 'high', 'centre', 'width', 'rate', 'guard'] as const)
     .flatMap((key) => (found[key]?.unit ? [{ key, place: found[key].address, unit: found[key].unit }] : []));
-  const units = new Set(frequencies.map(({ unit }) => frequencyUnit(unit)));
+  const relative = frequencies.filter(({ unit }) => isRelative(unit));
+  const units = new Set(frequencies.filter(({ unit }) => !isRelative(unit)).map(({ unit }) => frequencyUnit(unit)));
   const ppm = found.ppm?.unit;
   return [
+    ...relative.map(({ key, place, unit }) => sentences.notFrequency(key, place, unit)),
     ...(units.size > 1 ? [sentences.unitsDiffer(frequencies)] : []),
     ...(ppm && ppm !== 'ppm' ? [sentences.notPpm(found.ppm!.address, ppm)] : []),
   ];

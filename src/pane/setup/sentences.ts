@@ -54,6 +54,7 @@ export const sentences = {
   ambiguous: (edge: string, taken: string, other: string) => `The header in ${other} would do for the ${edge === 'low' ? 'low edge' : 'centre'} as well; ${taken} was taken.`,
   unitsDiffer: (all: { key: NameKey; place: string; unit: string }[]) =>
     `The plan mixes units: ${all.map(({ key, place, unit }) => `${STANDS[key].toLowerCase()} (${place}) in ${unit}`).join(', ')}. All frequencies must be in one unit; bring them to one in the sheet.`,
+  notFrequency: (key: NameKey, place: string, unit: string) => `${STANDS[key]}: ${place} is in ${unit}, which is no unit of frequency; point at another cell.`,
   notPpm: (place: string, unit: string) => `The clock tolerance in ${place} is in ${unit}; it must be in ppm. Convert it in the sheet.`,
 
   // What can't be used

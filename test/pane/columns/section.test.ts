@@ -167,6 +167,7 @@ describe('the section Columns never writes over content unasked', () => {
 
   it.each([
     ['the plan itself', 'B',    'Column B holds the plan itself; choose another first column.'],
+    ['too near the end', 'XFB', 'From column XFB on there is no room for 6 columns: the sheet ends with XFD. Choose another first column.'],
     ['no column',       '12!',  'The first column must be letters such as K, or a cell such as K7; got “12!”.'],
   ])('refuses %s', async (_what, text, sentence) => {
     const { press, type, host } = await start(edgesPlan());

@@ -59,6 +59,8 @@ const SHAPES: Shape[] = [
   ['abbreviated labels to the right',
     [['Low', 'High', null, 'fs =', 409.6], [87.5, 108, null, 'Guard band (MHz):', 0.02], [118, 137, null, 'ppm', null, 20]],
     { low: 'A2:A3', high: 'B2:B3', rate: 'E1', guard: 'E2', ppm: 'F3' }],
+  ['a clock in ppm, which is no rate', [['ADC rate', 100], ['Clock ppm', 20], [], ['Low', 'High'], ...edgesOnly], { low: 'A5:A7', high: 'B5:B7', rate: 'B1', ppm: 'B2' }],
+  ['a clock in ppm without a rate',    [['Speed', 100], ['Clock (ppm)', 20], [], ['Low', 'High'], ...edgesOnly], { low: 'A5:A7', high: 'B5:B7', ppm: 'B2' }],
   ['labels above their cells', [['ADC clock (MHz)', 'Guard'], [409.6, 0.02], [], ['Low', 'High'], ...edgesOnly], { low: 'A5:A7', high: 'B5:B7', rate: 'A2', guard: 'B2' }],
   ['a label whose cell is still blank', [['Sampling rate'], [], ['Low', 'High'], ...edgesOnly], { low: 'A4:A6', high: 'B4:B6', rate: 'B1' }],
 ];
@@ -122,6 +124,11 @@ describe('what does not fit is said', () => {
     expect(recognise([sheet([['Centre (MHz)', 'Width (kHz)'], [100, 25]])], null)!.problems).toEqual([
       'The plan mixes units: centres (A2) in MHz, widths (B2) in kHz. All frequencies must be in one unit; bring them to one in the sheet.',
     ]);
+  });
+
+  it('a rate in parts of something', () => {
+    const rows = [['Clock', 20, 'ppm'], [], ['Low', 'High'], [1, 2]];
+    expect(recognise([sheet(rows)], null)!.problems).toEqual(['Sample rate: B1 is in ppm, which is no unit of frequency; point at another cell.']);
   });
 
   it('a guard in another unit than the plan, and a tolerance in anything but ppm', () => {
