@@ -41,7 +41,10 @@ export async function mountPane(host: LiveHost, root: HTMLElement, version: stri
   let selected: number | null = null;
   const surroundings = { document, host, version, tell, refresh };
   const sections = SECTIONS.map((make) => make(surroundings));
-  const frame = tabs(document, sentences.sections, sections, showSection);
+  const frame = tabs(document, sentences.sections, sections, () => {
+    news.show([]); // which is of the section before
+    showSection();
+  });
   const banner = unknownBanner(surroundings);
   const foot = toDom(document, element('p', { class: 'foot' }, element('a', { href: 'help.html', target: '_blank', rel: 'noopener' }, sentences.reference)));
   root.classList.add('foldplan');
