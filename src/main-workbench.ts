@@ -128,32 +128,24 @@ async function save(page: Page, host: SheetHost): Promise<void> {
   }
 }
 
-class Cancelled extends Error {}
-
 /** The workbook as a file for programs without our functions; what the sheet shows stays. */
 async function savePlain(page: Page, host: SheetHost): Promise<void> {
   const name = current.name.replace(/(\.xlsx)?$/i, ' plain.xlsx');
-  let cancelled = false;
-  page.busy(true, () => {
-    cancelled = true;
-  });
+  const cancel = new AbortController();
+  page.busy(true, () => cancel.abort());
   page.tell(sentences.saving(name));
   try {
-    const [{ WorkbookFile, writeWorkbook }, { plainCopy }] = await Promise.all([import('./host/file'), import('./plain')]);
+    const [{ WorkbookFile, writeWorkbook }, { cancellable, plainCopy }] = await Promise.all([import('./host/file'), import('./plain')]);
     await host.settled();
     const file = await WorkbookFile.open(await writeWorkbook(host.save()));
     const copy = await plainCopy(await file.formulas(), { version: FOLDPLAN_VERSION, date: new Date().toISOString().slice(0, 10) },
-      async (done, total) => {
-        page.tell(sentences.looking(done, total));
-        await new Promise((resume) => setTimeout(resume)); // lets the page be drawn, and a click through
-        if (cancelled) throw new Cancelled();
-      });
+      cancellable(cancel.signal, (done, total) => page.tell(sentences.looking(done, total))));
     await file.replaceFormulas(copy);
     page.download(name, new Blob([(await file.save()) as Uint8Array<ArrayBuffer>], { type: XLSX }));
     const sum = (of: 'formulas' | 'values') => copy.counts.reduce((all, one) => all + one[of], 0);
     page.tell(sentences.savedPlain(name, sum('formulas'), sum('values')));
   } catch (error) {
-    if (error instanceof Cancelled) page.tell(sentences.cancelled);
+    if (error === cancel.signal.reason) page.tell(sentences.cancelled);
     else page.complain(error instanceof HostFault ? error.message : sentences.cannotSave(name));
   } finally {
     page.busy(false);

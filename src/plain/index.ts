@@ -3,4 +3,4 @@
 export { EQUIVALENTS } from './equivalents';
 export { callsOurs } from './plain-formula';
 export { workbookSource } from './workbook-source';
-export { type Maker, type OnProgress, type Outcome, type PlainCopy, type PlainSource, plainCopy } from './plain-copy';
+export { type Maker, type OnProgress, type Outcome, type PlainCopy, type PlainSource, cancellable, plainCopy } from './plain-copy';

@@ -46,6 +46,13 @@ export interface Maker {
 /** Called now and then; what it throws ends the work, and nothing has been changed. */
 export type OnProgress = (done: number, total: number) => void | Promise<void>;
 
+/** Progress on a page: it is drawn, a click gets through, and the work ends once `signal` is aborted, with the signal's reason. */
+export const cancellable = (signal: AbortSignal, tell: (done: number, total: number) => void): OnProgress => async (done, total) => {
+  tell(done, total);
+  await new Promise((resume) => setTimeout(resume));
+  signal.throwIfAborted();
+};
+
 export async function plainCopy(source: PlainSource, maker: Maker, onProgress: OnProgress = () => {}): Promise<PlainCopy> {
   const copier = new Copier(source);
   copier.convertNames();

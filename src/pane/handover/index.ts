@@ -1,6 +1,7 @@
 // The section Hand over: a plain copy for colleagues without the add-in, and FOLD cells that show an error.
 
 import { HostFault, type Workbook } from '../../host/port';
+import { cancellable } from '../../plain';
 import { referenceTo } from '../address';
 import { attempts } from '../attempt';
 import { type Tree, element, toDom } from '../element';
@@ -16,16 +17,13 @@ import { type Trouble, isUnknown, placeOf, troublesIn, unknownSentence } from '.
 /** How many cells in error are told one by one. */
 const TOLD = 20;
 
-/** Thrown into the work on a copy to end it. */
-class Cancelled extends Error {}
-
 export const handOverSection: MakeSection = (surroundings) => {
   const { document, host, tell, version } = surroundings;
   const attempt = attempts(surroundings);
 
   let contents: Workbook | null = null;
   let undo: (() => Promise<void>) | null = null;
-  let cancelled = false;
+  let cancel = new AbortController();
 
   // The page
 
@@ -36,9 +34,7 @@ export const handOverSection: MakeSection = (surroundings) => {
   const field = toDom(document, element('div', { class: 'field' }, element('label', { for: 'foldplan-copied-sheet' }, sentences.chosen))) as HTMLElement;
   field.append(select);
   const making = button('main', sentences.make, () => attempt(make));
-  const cancelling = button('', sentences.cancel, () => {
-    cancelled = true;
-  });
+  const cancelling = button('', sentences.cancel, () => cancel.abort());
   const undoing = button('', sentences.undo, () => attempt(takeBack));
   const buttons = toDom(document, element('div', { class: 'buttons' })) as HTMLElement;
   buttons.append(making, cancelling, undoing);
@@ -83,7 +79,7 @@ export const handOverSection: MakeSection = (surroundings) => {
 
   async function make(): Promise<void> {
     const sheet = select.value;
-    cancelled = false;
+    cancel = new AbortController();
     making.hidden = true;
     cancelling.hidden = false;
     cancelling.focus();
@@ -91,16 +87,14 @@ export const handOverSection: MakeSection = (surroundings) => {
       await look();
       making.hidden = true;
       if (!contents!.sheets.some(({ name }) => name === sheet)) return tell(sentences.gone(sheet), 'fault');
-      const copied = await plainSheet(contents!, sheet, { version, date: new Date().toISOString().slice(0, 10) }, async (done, total) => {
+      const copied = await plainSheet(contents!, sheet, { version, date: new Date().toISOString().slice(0, 10) }, cancellable(cancel.signal, (done, total) => {
         progress.show([element('p', {}, sentences.progress(done, total))]);
-        await new Promise((resume) => setTimeout(resume)); // lets a click through
-        if (cancelled) throw new Cancelled();
-      });
+      }));
       undo = await host.change(copied.change);
       await host.select(referenceTo(copied.copy, 'A1'));
       tell(sentences.made(copied.copy, copied.list, copied.formulas, copied.values), 'news');
     } catch (fault) {
-      if (!(fault instanceof Cancelled)) throw fault;
+      if (fault !== cancel.signal.reason) throw fault;
       tell(sentences.cancelled, 'news');
     } finally {
       progress.show([]);
@@ -134,7 +128,7 @@ export const handOverSection: MakeSection = (surroundings) => {
       });
     },
     close() {
-      cancelled = true;
+      cancel.abort();
     },
   };
 };
